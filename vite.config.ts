@@ -1,0 +1,49 @@
+// Builds (command line, benchmark) and the test runner. Everything runs in Node; the output goes to dist/.
+import { existsSync } from 'node:fs';
+import { defineConfig } from 'vitest/config';
+import type { Reporter, TestModule } from 'vitest/node';
+
+const root = import.meta.dirname;
+
+/** Entries of each build, by the name given to `vite build --mode`. */
+const builds: Record<string, Record<string, string>> = {
+  cli: { main: 'sim/cli/main.ts', worker: 'sim/cli/worker.ts' },
+  bench: { main: 'tests/bench/main.ts' },
+};
+
+/** Ends a test run with one plain line. A file that does not load and an error outside a test count as failed. */
+const closingLine: Reporter = {
+  onTestRunEnd(modules: readonly TestModule[], unhandledErrors: readonly unknown[]) {
+    let passed = 0;
+    let failed = unhandledErrors.length;
+    for (const module of modules) {
+      const results = [...module.children.allTests()].map((test) => test.result().state);
+      passed += results.filter((state) => state === 'passed').length;
+      const failedTests = results.filter((state) => state === 'failed').length;
+      failed += failedTests === 0 && module.state() === 'failed' ? 1 : failedTests;
+    }
+    console.log(`${passed} passed, ${failed} failed`);
+  },
+};
+
+export default defineConfig(({ mode }) => ({
+  root,
+  build: {
+    ssr: true,
+    target: 'node20',
+    outDir: `dist/${mode}`,
+    emptyOutDir: true,
+    rolldownOptions: {
+      // The worker thread is a second entry; a build without one is the command line in a single thread.
+      input: Object.fromEntries(Object.entries(builds[mode] ?? {}).filter(([, file]) => existsSync(file))),
+      output: { entryFileNames: '[name].js', chunkFileNames: '[name]-[hash].js' },
+    },
+  },
+  // One bundle starts faster than a tree of modules.
+  ssr: { noExternal: true },
+  test: {
+    include: ['tests/**/*.test.ts'],
+    reporters: ['default', closingLine],
+    coverage: { include: ['sim/**/*.ts', 'ui/**/*.ts'], reportsDirectory: 'coverage' },
+  },
+}));
