@@ -40,18 +40,9 @@ export function diffusionVolume(atoms: Readonly<Record<string, number>>, rings =
  * Source: [Fuller1966], equation 4, volumes of [Fuller1969]. Departs: SI units. The constant 0.00143
  *   with p in bar of [Poling2001] gives 0.2 % less.
  */
-export function fullerDiffusivity(
-  T: number,
-  p: number,
-  M1: number,
-  M2: number,
-  v1: number,
-  v2: number,
-): number {
+export function fullerDiffusivity(T: number, p: number, M1: number, M2: number, v1: number, v2: number): number {
   const size = Math.cbrt(v1) + Math.cbrt(v2);
   const power = Math.exp(1.75 * Math.log(T));
   const atmospheres = p / 101_325;
-  return (
-    (1e-4 * 1e-3 * power * Math.sqrt(1e-3 / M1 + 1e-3 / M2)) / (atmospheres * size * size)
-  );
+  return (1e-4 * 1e-3 * power * Math.sqrt(1e-3 / M1 + 1e-3 / M2)) / (atmospheres * size * size);
 }

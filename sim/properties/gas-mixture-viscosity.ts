@@ -16,13 +16,7 @@
  * @remarks Range: dilute gases, no hydrogen-heavy pairs. Error: about 2 %.
  * Source: [Wilke1950], equations 13 and 14. Departs: nothing.
  */
-export function wilkeViscosity(
-  y1: number,
-  mu1: number,
-  mu2: number,
-  M1: number,
-  M2: number,
-): number {
+export function wilkeViscosity(y1: number, mu1: number, mu2: number, M1: number, M2: number): number {
   const y2 = 1 - y1;
   const root = Math.sqrt(mu1 / mu2);
   const quarter = Math.sqrt(Math.sqrt(M2 / M1));

@@ -76,11 +76,7 @@ export function idealGasHeatCapacity(polynomial: HeatCapacityPolynomial, T: numb
  * @returns Enthalpy difference, J/mol; zero at T = T0.
  * @remarks Range as the heat capacity. Source: integral of the polynomial.
  */
-export function idealGasEnthalpyChange(
-  polynomial: HeatCapacityPolynomial,
-  T0: number,
-  T: number,
-): number {
+export function idealGasEnthalpyChange(polynomial: HeatCapacityPolynomial, T0: number, T: number): number {
   return primitive(polynomial, T - polynomial.offset) - primitive(polynomial, T0 - polynomial.offset);
 }
 

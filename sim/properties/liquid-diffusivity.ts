@@ -19,13 +19,7 @@ export const WATER_ASSOCIATION = 2.6;
  *   gives 7 % less [Hayduk1974]; poor for ammonia (47 % high).
  * Source: [Wilke1955], equation 5. Departs: SI units.
  */
-export function wilkeChangDiffusivity(
-  T: number,
-  mu: number,
-  M: number,
-  phi: number,
-  v: number,
-): number {
+export function wilkeChangDiffusivity(T: number, mu: number, M: number, phi: number, v: number): number {
   const volume = Math.exp(0.6 * Math.log(v * 1e6));
   return (1e-4 * 7.4e-8 * Math.sqrt(phi * M * 1e3) * T) / (mu * 1e3 * volume);
 }
@@ -44,13 +38,7 @@ export function wilkeChangDiffusivity(
  * @remarks Range: the same solvent, dilute. Error: a few per cent over 40 K in water.
  * Source: constancy of D mu/T, [Wilke1955] after Stokes and Einstein [Einstein1905].
  */
-export function scaledDiffusivity(
-  DRef: number,
-  TRef: number,
-  muRef: number,
-  T: number,
-  mu: number,
-): number {
+export function scaledDiffusivity(DRef: number, TRef: number, muRef: number, T: number, mu: number): number {
   return (DRef * T * muRef) / (TRef * mu);
 }
 

@@ -24,7 +24,5 @@ export interface SutherlandConstants {
  */
 export function sutherland(constants: SutherlandConstants, T: number): number {
   const ratio = T / constants.T0;
-  return (
-    (constants.f0 * ratio * Math.sqrt(ratio) * (constants.T0 + constants.S)) / (T + constants.S)
-  );
+  return (constants.f0 * ratio * Math.sqrt(ratio) * (constants.T0 + constants.S)) / (T + constants.S);
 }

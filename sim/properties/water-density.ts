@@ -37,10 +37,8 @@ export function waterDensity(T: number): number {
   const beta = T_REFERENCE / (T - 232);
   const alpha2 = alpha * alpha;
   const alpha4 = alpha2 * alpha2;
-  const gas =
-    A5 + alpha4 * (A6 + alpha * (A7 + alpha2 * (A8 + alpha * (A9 + alpha * A10))));
-  const cold =
-    beta * (B5 + beta * (B6 + beta * (B7 + beta * (B8 + beta * (B9 + beta * B10)))));
+  const gas = A5 + alpha4 * (A6 + alpha * (A7 + alpha2 * (A8 + alpha * (A9 + alpha * A10))));
+  const cold = beta * (B5 + beta * (B6 + beta * (B7 + beta * (B8 + beta * (B9 + beta * B10)))));
   return 1 / (VOLUME_SCALE * (gas + cold));
 }
 
@@ -59,11 +57,8 @@ export function waterDensitySlope(T: number): number {
   const beta = T_REFERENCE / (T - 232);
   const alpha2 = alpha * alpha;
   const alpha3 = alpha2 * alpha;
-  const dGas =
-    alpha3 *
-    (4 * A6 + alpha * (5 * A7 + alpha2 * (7 * A8 + alpha * (8 * A9 + alpha * 9 * A10))));
-  const dCold =
-    B5 + beta * (2 * B6 + beta * (3 * B7 + beta * (4 * B8 + beta * (5 * B9 + beta * 6 * B10))));
+  const dGas = alpha3 * (4 * A6 + alpha * (5 * A7 + alpha2 * (7 * A8 + alpha * (8 * A9 + alpha * 9 * A10))));
+  const dCold = B5 + beta * (2 * B6 + beta * (3 * B7 + beta * (4 * B8 + beta * (5 * B9 + beta * 6 * B10))));
   const dVolume = (VOLUME_SCALE * (dGas * alpha2 - dCold * beta * beta)) / T_REFERENCE;
   return -dVolume * waterDensity(T);
 }

@@ -38,10 +38,7 @@ export function henrySolubility(constant: HenryConstant, T: number): number {
  * @returns Pressure scale, Pa, and d ln K/dT = B/T^2 + d ln c/dT, 1/K.
  * @remarks Range and error as the solubility. Source: [Sander2023], section 2.4 (x = c/c_solvent).
  */
-export function henryPressure(
-  constant: HenryConstant,
-  solvent: TemperatureFunction,
-): TemperatureFunction {
+export function henryPressure(constant: HenryConstant, solvent: TemperatureFunction): TemperatureFunction {
   return {
     value: (T) => solvent.value(T) / henrySolubility(constant, T),
     relativeSlope: (T) => constant.B / (T * T) + solvent.relativeSlope(T),

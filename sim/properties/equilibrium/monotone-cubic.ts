@@ -73,12 +73,7 @@ export function curveValue(curve: MonotoneCurve, at: number): number {
   const h = x[k + 1] - x[k];
   const s = (at - x[k]) / h;
   const r = 1 - s;
-  return (
-    y[k] * r * r * (1 + 2 * s) +
-    d[k] * h * s * r * r +
-    y[k + 1] * s * s * (3 - 2 * s) -
-    d[k + 1] * h * s * s * r
-  );
+  return y[k] * r * r * (1 + 2 * s) + d[k] * h * s * r * r + y[k + 1] * s * s * (3 - 2 * s) - d[k + 1] * h * s * s * r;
 }
 
 /** Derivative at `at`; constant beyond the ends. */
@@ -91,9 +86,5 @@ export function curveSlope(curve: MonotoneCurve, at: number): number {
   const h = x[k + 1] - x[k];
   const s = (at - x[k]) / h;
   const r = 1 - s;
-  return (
-    (6 * s * r * (y[k + 1] - y[k])) / h +
-    d[k] * r * (1 - 3 * s) +
-    d[k + 1] * s * (3 * s - 2)
-  );
+  return (6 * s * r * (y[k + 1] - y[k])) / h + d[k] * r * (1 - 3 * s) + d[k + 1] * s * (3 * s - 2);
 }

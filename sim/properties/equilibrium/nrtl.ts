@@ -48,10 +48,7 @@ export function nrtlLogGammaSlope(constants: NrtlConstants, T: number, x: number
   const far = x2 + x * G12;
   const first = (tau21 * G21 * G21) / (near * near);
   const second = (tau12 * G12) / (far * far);
-  return (
-    -2 * x2 * (first + second) -
-    2 * x2 * x2 * ((first * (1 - G21)) / near + (second * (G12 - 1)) / far)
-  );
+  return -2 * x2 * (first + second) - 2 * x2 * x2 * ((first * (1 - G21)) / near + (second * (G12 - 1)) / far);
 }
 
 /**
@@ -68,14 +65,11 @@ export function nrtlLaw(constants: NrtlConstants, saturation: TemperatureFunctio
     kind: 'nrtl',
     partialPressure: (T, x) => saturation.value(T) * x * Math.exp(nrtlLogGamma(constants, T, x)),
     slope: (T, x) =>
-      saturation.value(T) *
-      Math.exp(nrtlLogGamma(constants, T, x)) *
-      (1 + x * nrtlLogGammaSlope(constants, T, x)),
+      saturation.value(T) * Math.exp(nrtlLogGamma(constants, T, x)) * (1 + x * nrtlLogGammaSlope(constants, T, x)),
     vaporisationEnthalpy: (T) => {
       const tau12 = constants.b12 / (GAS_CONSTANT * T);
       const tau21 = constants.b21 / (GAS_CONSTANT * T);
-      const dLogGamma =
-        -(tau21 + tau12 * (1 - constants.alpha * tau12) * Math.exp(-constants.alpha * tau12)) / T;
+      const dLogGamma = -(tau21 + tau12 * (1 - constants.alpha * tau12) * Math.exp(-constants.alpha * tau12)) / T;
       return GAS_CONSTANT * T * T * (saturation.relativeSlope(T) + dLogGamma);
     },
   };

@@ -62,10 +62,7 @@ function gammaLaw(
  *   mixing, as the constants do not depend on temperature).
  * @remarks Range and error as the activity coefficient. Source: [vanLaar1910].
  */
-export function vanLaarLaw(
-  constants: VanLaarConstants,
-  saturation: TemperatureFunction,
-): SeparableLaw {
+export function vanLaarLaw(constants: VanLaarConstants, saturation: TemperatureFunction): SeparableLaw {
   return gammaLaw('van-laar', saturation, constants, 0);
 }
 
@@ -81,9 +78,6 @@ export function vanLaarLaw(
  * Source: unsymmetric convention, [Prausnitz1999], section 6.4. Departs: constants of the boiling fit are
  *   kept at all temperatures.
  */
-export function vanLaarHenryLaw(
-  constants: VanLaarConstants,
-  henry: TemperatureFunction,
-): SeparableLaw {
+export function vanLaarHenryLaw(constants: VanLaarConstants, henry: TemperatureFunction): SeparableLaw {
   return gammaLaw('van-laar-henry', henry, constants, constants.A12);
 }

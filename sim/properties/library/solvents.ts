@@ -135,10 +135,8 @@ export function oilSolvent(data: OilData, id = 'heavy-oil', name = 'heavy absorp
     molarMass: data.molarMass.value,
     density,
     densitySlope: (T) => data.densitySlope.value / density(T),
-    viscosity: (T) =>
-      data.viscosity.value * Math.exp(data.viscosityExponent.value * (1 / T - 1 / TRef)),
-    surfaceTension: (T) =>
-      data.surfaceTension.value + data.surfaceTensionSlope.value * (T - TRef),
+    viscosity: (T) => data.viscosity.value * Math.exp(data.viscosityExponent.value * (1 / T - 1 / TRef)),
+    surfaceTension: (T) => data.surfaceTension.value + data.surfaceTensionSlope.value * (T - TRef),
     heatCapacity: (T) => data.heatCapacity.value + data.heatCapacitySlope.value * (T - TRef),
     thermalConductivity: () => data.thermalConductivity.value,
     saturationPressure: () => 0,
@@ -179,9 +177,7 @@ export function solventSaturation(solvent: Solvent): TemperatureFunction {
 }
 
 /** Antoine vapour pressure with its relative slope, for a pure solute. */
-export function antoineSaturation(
-  constants: Parameters<typeof antoinePressure>[0],
-): TemperatureFunction {
+export function antoineSaturation(constants: Parameters<typeof antoinePressure>[0]): TemperatureFunction {
   return {
     value: (T) => antoinePressure(constants, T),
     relativeSlope: (T) => antoineSlope(constants, T),
