@@ -31,7 +31,7 @@ export class SimError extends Error {
   /** What went wrong. */
   readonly fault: SimFault;
 
-  /** @param fault - What went wrong; the message is made from it. */
+  /** Makes the message from `fault`. */
   constructor(fault: SimFault) {
     super(sentence(fault));
     this.name = 'SimError';
