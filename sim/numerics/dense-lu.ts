@@ -93,11 +93,7 @@ export function createDenseLu(n: number): DenseLu {
  * @param pattern - Where J has entries; values come in its order.
  * @param mass - Diagonal of M, length n; all ones when absent.
  */
-export function createDenseSolver(
-  n: number,
-  pattern: SparsePattern,
-  mass?: Float64Array,
-): ShiftedSolver {
+export function createDenseSolver(n: number, pattern: SparsePattern, mass?: Float64Array): ShiftedSolver {
   const lu = createDenseLu(n);
   const { rowStart, column } = pattern;
   return {

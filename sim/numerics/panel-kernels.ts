@@ -79,14 +79,9 @@ export function eliminateFourFromOne(
   const placeA = rowA + places[k];
   const a0 = values[placeA] * inverse[at];
   const a1 = (values[placeA + 1] - a0 * values[pivotRow + k + 1]) * inverse[at + 1];
-  const a2 =
-    (values[placeA + 2] - a0 * values[pivotRow + k + 2] - a1 * values[u1 + k + 2]) *
-    inverse[at + 2];
+  const a2 = (values[placeA + 2] - a0 * values[pivotRow + k + 2] - a1 * values[u1 + k + 2]) * inverse[at + 2];
   const a3 =
-    (values[placeA + 3] -
-      a0 * values[pivotRow + k + 3] -
-      a1 * values[u1 + k + 3] -
-      a2 * values[u2 + k + 3]) *
+    (values[placeA + 3] - a0 * values[pivotRow + k + 3] - a1 * values[u1 + k + 3] - a2 * values[u2 + k + 3]) *
     inverse[at + 3];
   values[placeA] = a0;
   values[placeA + 1] = a1;

@@ -179,12 +179,7 @@ function forwardPanel(values: Float64Array, panel: Panel, b: Float64Array): void
 }
 
 /** b := U^-1 b on the rows of a panel, last row first. */
-function backwardPanel(
-  values: Float64Array,
-  panel: Panel,
-  inversePivot: Float64Array,
-  b: Float64Array,
-): void {
+function backwardPanel(values: Float64Array, panel: Panel, inversePivot: Float64Array, b: Float64Array): void {
   const { first, last, base, width, own, columns } = panel;
   let i = last - 1;
   for (; i - 1 >= first; i -= 2) {

@@ -39,7 +39,10 @@ export function createPatternBuilder(n: number): PatternBuilder {
       });
       const column = new Int32Array(rowStart[n]);
       rows.forEach((columns, i) => {
-        column.set([...columns].sort((a, b) => a - b), rowStart[i]);
+        column.set(
+          [...columns].sort((a, b) => a - b),
+          rowStart[i],
+        );
       });
       return { n, rowStart, column };
     },

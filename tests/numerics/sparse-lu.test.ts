@@ -2,11 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { createDenseSolver } from '../../sim/numerics/dense-lu.ts';
 import { createSparseSolver } from '../../sim/numerics/sparse-lu.ts';
-import {
-  createPatternBuilder,
-  densePattern,
-  entryIndex,
-} from '../../sim/numerics/sparse-pattern.ts';
+import { createPatternBuilder, densePattern, entryIndex } from '../../sim/numerics/sparse-pattern.ts';
 import type { SparsePattern } from '../../sim/numerics/sparse-pattern.ts';
 
 function product(pattern: SparsePattern, values: Float64Array, x: Float64Array): Float64Array {
