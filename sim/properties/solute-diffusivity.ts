@@ -1,10 +1,10 @@
 // Which diffusivity a solute has in a given gas or liquid: the choice between measured and estimated.
 
+import { REFERENCE_TEMPERATURE } from './constants.ts';
 import { fullerDiffusivity } from './gas-diffusivity.ts';
 import type { Carrier } from './library/carriers.ts';
 import type { Solute } from './library/solutes.ts';
 import type { Solvent } from './library/solvents.ts';
-import { REFERENCE_TEMPERATURE } from './constants.ts';
 import { scaledDiffusivity, wilkeChangDiffusivity } from './liquid-diffusivity.ts';
 
 /**
@@ -34,8 +34,8 @@ export function gasDiffusivityOf(
 }
 
 /**
- * Liquid diffusivity of a solute in a solvent: in water the listed value at 298.15 K scaled with T/mu,
- * otherwise Wilke and Chang.
+ * Liquid diffusivity of a solute in a solvent: the listed value scaled with T/mu where there is one,
+ * otherwise Wilke and Chang (2.5 times the textbook value for benzene in a heavy oil).
  *
  * @param solute - The solute.
  * @param solvent - The solvent.
@@ -45,13 +45,12 @@ export function gasDiffusivityOf(
  */
 export function liquidDiffusivityOf(solute: Solute, solvent: Solvent, T: number): number {
   if (solvent.id === 'water' && solute.diffusivityInWater !== undefined) {
-    return scaledDiffusivity(
-      solute.diffusivityInWater.value,
-      REFERENCE_TEMPERATURE,
-      solvent.viscosity(REFERENCE_TEMPERATURE),
-      T,
-      solvent.viscosity(T),
-    );
+    const TRef = REFERENCE_TEMPERATURE;
+    return scaledDiffusivity(solute.diffusivityInWater.value, TRef, solvent.viscosity(TRef), T, solvent.viscosity(T));
+  }
+  const measured = solute.liquidDiffusivity?.[solvent.id]?.value;
+  if (measured !== undefined) {
+    return scaledDiffusivity(measured.D, measured.T, measured.mu, T, solvent.viscosity(T));
   }
   return wilkeChangDiffusivity(
     T,

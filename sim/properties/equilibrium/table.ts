@@ -31,7 +31,7 @@ export interface EquilibriumTable {
  *   interval's exponent: smooth in x and continuous in T, for a solver that strays; a run reports that
  *   it left the table, a case that starts outside is refused by `tableCovers`. Error: third order in x.
  *   At T between tabulated values the slope in x is exact; d p* /dT jumps at tabulated temperatures.
- *   Below x = 0 the mixing works on the slopes at 0, so p* passes linearly through zero.
+ *   At and below x = 0 the mixing works on the slopes there, so p* passes linearly through zero.
  * Source: [FritschCarlson1980]; ln p over 1/T is the Clausius-Clapeyron relation.
  */
 export function tableLaw(table: EquilibriumTable): EquilibriumLaw {
@@ -78,9 +78,11 @@ function mixed(
   const w = (inverseLow - 1 / T) / (inverseLow - 1 / temperatures[k + 1]);
   const slopeLow = curveSlope(curves[k], x);
   const slopeHigh = curveSlope(curves[k + 1], x);
-  const low = x > 0 ? curveValue(curves[k], x) : slopeLow;
-  const high = x > 0 ? curveValue(curves[k + 1], x) : slopeHigh;
+  // So close to zero that the curves are straight lines: mix the slopes, 0/0 otherwise.
+  const atZero = x <= 1e-9 * curves[k].x[1];
+  const low = atZero ? slopeLow : curveValue(curves[k], x);
+  const high = atZero ? slopeHigh : curveValue(curves[k + 1], x);
   const mean = low * Math.exp(w * Math.log(high / low));
-  if (x <= 0) return wantSlope ? mean : mean * x;
+  if (atZero) return wantSlope ? mean : mean * x;
   return wantSlope ? mean * (((1 - w) * slopeLow) / low + (w * slopeHigh) / high) : mean;
 }

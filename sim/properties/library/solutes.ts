@@ -11,6 +11,16 @@ import { idealGasHeatCapacity } from '../ideal-gas.ts';
 import { computed, fromMemory, seen } from '../provenance.ts';
 import type { Sourced } from '../provenance.ts';
 
+/** A liquid diffusivity with the state it belongs to; D mu/T carries it elsewhere. */
+export interface LiquidDiffusivity {
+  /** m2/s. */
+  readonly D: number;
+  /** K. */
+  readonly T: number;
+  /** Viscosity of the solvent in that state, Pa s. */
+  readonly mu: number;
+}
+
 /** A transferring component. */
 export interface Solute {
   readonly id: string;
@@ -26,6 +36,8 @@ export interface Solute {
   readonly boilingVolume: Sourced;
   /** Diffusivity in water at 298.15 K, m2/s. */
   readonly diffusivityInWater?: Sourced;
+  /** Diffusivity in other solvents, by the solvent's id. */
+  readonly liquidDiffusivity?: Readonly<Record<string, Sourced<LiquidDiffusivity>>>;
   /** Volume that one mole adds to the liquid, m3/mol. */
   readonly liquidVolume: Sourced;
   /** Ideal-gas heat capacity, J/(mol K). */
@@ -126,9 +138,10 @@ export const ethanol: Solute = {
   boilingVolume: fromMemory(59.2e-6, LE_BAS),
   diffusivityInWater: fromMemory(1.24e-9, 'measured 1.24e-9; a handbook prints 0.84e-9'),
   liquidVolume: fromMemory(58.7e-6, DENSITY),
-  gasHeatCapacity: seen(kelvin(19.9, 20.96e-2, -10.38e-5, 20.05e-9), KYLE),
+  gasHeatCapacity: fromMemory(kelvin(9.014, 2.141e-1, -8.39e-5, 1.373e-9), REID),
   liquidHeatCapacity: fromMemory(112.3, CRC_CP),
   antoine: seen({ A: 16.8958, B: 3795.17, C: 230.918, TMin: 276, TMax: 369 }, SVN),
+  note: 'two printed polynomials, [Kyle1984] and [Smith2018], give a gas heat capacity 13 % above the measured one: not used',
   vanLaarInWater: seen({ A12: 1.6798, A21: 0.9227 }, '[Perry2008] table 13-3 (seen quoted)'),
   nrtlInWater: fromMemory(nrtlCalories(-109.63, 1332.31, 0.3031), PERRY_VLE),
 };
@@ -264,6 +277,9 @@ export const benzene: Solute = {
   diffusionVolume: computed(diffusionVolume({ C: 6, H: 6 }, 1), FULLER_ATOMS),
   boilingVolume: fromMemory(96.0e-6, LE_BAS),
   diffusivityInWater: fromMemory(1.05e-9, 'measured 1.02-1.1e-9'),
+  liquidDiffusivity: {
+    'heavy-oil': seen({ D: 4.71e-10, T: 300, mu: 2e-3 }, '[Treybal1980] illustration 6.6'),
+  },
   liquidVolume: fromMemory(89.4e-6, DENSITY),
   gasHeatCapacity: seen(kelvin(-36.22, 48.475e-2, -31.57e-5, 77.62e-9), KYLE),
   liquidHeatCapacity: fromMemory(136.0, CRC_CP),
