@@ -113,7 +113,7 @@ export const RODAS4: RosenbrockTableau = {
 
 /**
  * Rodas5P: 8 stages, order 5(4), L-stable, stiffly accurate, of order 3 and more on linear parabolic problems and
- * Prothero-Robinson's. Coefficients: [Steinebach2023, table 3].
+ * Prothero-Robinson's. Coefficients: [Steinebach2023].
  */
 export const RODAS5P: RosenbrockTableau = {
   name: 'Rodas5P',
