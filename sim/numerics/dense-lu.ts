@@ -107,6 +107,6 @@ export function createDenseSolver(n: number, pattern: SparsePattern, mass?: Floa
       }
       return lu.factor();
     },
-    solve: lu.solve,
+    solve: (b) => lu.solve(b),
   };
 }

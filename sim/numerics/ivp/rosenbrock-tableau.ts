@@ -9,6 +9,8 @@
  *   y(theta) = (1 - theta) y + theta (y_new + (1 - theta) (k_1 + theta (k_2 + theta k_3 ...))),   k_p = sum_j dense_pj u_j
  */
 
+import { minimumNorm } from '../minimum-norm.ts';
+
 /** A Rosenbrock method of s stages. */
 export interface RosenbrockTableau {
   readonly name: string;
@@ -167,3 +169,59 @@ export const RODAS5P: RosenbrockTableau = {
     ],
   ],
 };
+
+const W_GAMMA = 0.435866521508459; // root of x^3 - 3 x^2 + 3 x/2 - 1/6 in (0.4, 0.5): L-stable of order 3
+const ROS34PW2_STANDARD: StandardRosenbrock = {
+  alpha: [
+    [0, 0, 0, 0],
+    [0.87173304301691801, 0, 0, 0],
+    [0.84457060015369423, -0.11299064236484185, 0, 0],
+    [0, 0, 1, 0],
+  ],
+  gamma: [
+    [W_GAMMA, 0, 0, 0],
+    [-0.87173304301691801, W_GAMMA, 0, 0],
+    [-0.90338057013044082, 0.054180672388095326, W_GAMMA, 0],
+    [0.24212380706095346, -1.2232505839045147, 0.54526025533510214, W_GAMMA],
+  ],
+  b: [0.24212380706095346, -1.2232505839045147, 1.545260255335102, W_GAMMA],
+  bEmbedded: [0.37810903145819369, -0.096042292212423178, 0.5, 0.2179332607542295],
+};
+
+/**
+ * ROS34PW2: 4 stages, order 3(2), L-stable, stiffly accurate, and of order 3 with any matrix in place of the Jacobian
+ * (with the exact one also for index-1 and linear parabolic problems). Coefficients: [RangAngermann2005]. The
+ * continuous solution is the only one of order 3 on these stages, derived here.
+ */
+export const ROS34PW2: RosenbrockTableau = {
+  name: 'ROS34PW2',
+  order: 3,
+  embeddedOrder: 2,
+  denseOrder: 3,
+  toleratesAnyMatrix: true,
+  ...transformed(ROS34PW2_STANDARD),
+  dense: thirdOrderDense(ROS34PW2_STANDARD),
+};
+
+/**
+ * The k_p of the continuous solution of order 3 of a 4-stage method. Its weights b(theta) obey, with beta = alpha + gamma,
+ * sum b_i = theta, sum b_i beta_i = theta^2/2, sum b_i alpha_i^2 = theta^3/3, sum b_i beta_ij beta_j = theta^3/6
+ * [HairerWanner1996, IV.7 with theta in place of 1]: four conditions for four weights.
+ */
+function thirdOrderDense(standard: StandardRosenbrock): number[][] {
+  const { alpha, gamma } = standard;
+  const sum = (row: readonly number[]): number => row.reduce((total, x) => total + x, 0);
+  const beta = alpha.map((row, i) => row.map((x, j) => x + gamma[i][j]));
+  const betaSums = beta.map(sum);
+  const conditions = [
+    alpha.map(() => 1),
+    betaSums,
+    alpha.map((row) => sum(row) ** 2),
+    beta.map((row) => row.reduce((total, x, j) => total + x * betaSums[j], 0)),
+  ];
+  const square = minimumNorm(conditions, [0, 1 / 2, 0, 0]); // weights of theta^2
+  const cube = minimumNorm(conditions, [0, 0, 1 / 3, 1 / 6]); // weights of theta^3
+  const first = square.map((x, i) => -x - cube[i]);
+  const second = cube.map((x) => -x);
+  return [timesInverse(first, gamma), timesInverse(second, gamma)];
+}
