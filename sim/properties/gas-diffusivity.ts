@@ -37,7 +37,7 @@ export function diffusionVolume(atoms: Readonly<Record<string, number>>, rings =
  * @returns Diffusivity, m2/s.
  * @remarks Range: dilute gases to about 10 bar. Error: 4-5 % on average, 10-20 % for polar pairs.
  *   D goes as T^1.75/p: sample once and scale.
- * Source: [Fuller1966], equation 4, volumes of [Fuller1969]. Departs: SI units. The constant 0.00143
+ * Source: [Fuller1966], volumes of [Fuller1969]. Departs: SI units. The constant 0.00143
  *   with p in bar of [Poling2001] gives 0.2 % less.
  */
 export function fullerDiffusivity(T: number, p: number, M1: number, M2: number, v1: number, v2: number): number {

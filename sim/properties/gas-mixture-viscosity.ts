@@ -14,7 +14,7 @@
  * @param M2 - Molar mass of gas 2, kg/mol.
  * @returns Viscosity, Pa s; equals the pure value at either end.
  * @remarks Range: dilute gases, no hydrogen-heavy pairs. Error: about 2 %.
- * Source: [Wilke1950], equations 13 and 14. Departs: nothing.
+ * Source: [Wilke1950]. Departs: nothing.
  */
 export function wilkeViscosity(y1: number, mu1: number, mu2: number, M1: number, M2: number): number {
   const y2 = 1 - y1;

@@ -17,7 +17,7 @@ export const WATER_ASSOCIATION = 2.6;
  * @returns Diffusivity, m2/s.
  * @remarks Range: dilute, 273-313 K by the data of the fit. Error: 11 % in water; phi = 2.26 for water
  *   gives 7 % less [Hayduk1974]; poor for ammonia (47 % high).
- * Source: [Wilke1955], equation 5. Departs: SI units.
+ * Source: [Wilke1955]. Departs: SI units.
  */
 export function wilkeChangDiffusivity(T: number, mu: number, M: number, phi: number, v: number): number {
   const volume = Math.exp(0.6 * Math.log(v * 1e6));

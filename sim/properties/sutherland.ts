@@ -20,7 +20,7 @@ export interface SutherlandConstants {
  * @returns Viscosity, Pa s, or thermal conductivity, W/(m K), as the constants are.
  * @remarks Range for 2-4 % error: about 200-1500 K (steam 360-1500 K); extrapolates monotonically.
  *   Independent of pressure below about 10 bar.
- * Source: [White2006], equations 1-36 and 1-44 and tables 1-2 and 1-3; form of [Sutherland1893].
+ * Source: [White2006], tables 1-2 and 1-3; form of [Sutherland1893].
  */
 export function sutherland(constants: SutherlandConstants, T: number): number {
   const ratio = T / constants.T0;

@@ -30,7 +30,7 @@ const B10 = -1.19946761e-2;
  * @returns Density, kg/m3.
  * @remarks Range 253.15-383.15 K; outside, extrapolates smoothly between 240 and 450 K. Error: 1e-6
  *   relative from 273 to 373 K. The pressure's effect (4.5e-5 for each MPa) is left out.
- * Source: [SR6-08], equation 2 and table 1. Departs: nothing.
+ * Source: [SR6-08], density equation and table 1. Departs: nothing.
  */
 export function waterDensity(T: number): number {
   const alpha = T_REFERENCE / (593 - T);
@@ -50,7 +50,7 @@ export function waterDensity(T: number): number {
  * @param T - Temperature, K; scalar.
  * @returns Slope, 1/K; changes sign at 277.13 K.
  * @remarks Range as the density.
- * Source: derivative of [SR6-08], equation 2.
+ * Source: derivative of the form above.
  */
 export function waterDensitySlope(T: number): number {
   const alpha = T_REFERENCE / (593 - T);

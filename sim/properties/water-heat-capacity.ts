@@ -23,7 +23,7 @@ const C3 = -8.983025854;
  * @param T - Temperature, K; scalar.
  * @returns Heat capacity, J/(kg K).
  * @remarks Range 253.15-383.15 K; outside, extrapolates smoothly between 240 and 450 K. Error: 0.1 %.
- * Source: [SR6-08], equation 5 and table 1. Departs: nothing.
+ * Source: [SR6-08], heat capacity equation and table 1. Departs: nothing.
  */
 export function waterHeatCapacity(T: number): number {
   const alpha = T_REFERENCE / (593 - T);

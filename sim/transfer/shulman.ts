@@ -14,7 +14,7 @@
  * @param DG - Diffusivity in the gas, m2/s.
  * @param epsLo - Void fraction left by the liquid, 0..1.
  * @returns Coefficient FG, mol/(m2 s); equals kG p for a trace.
- * @remarks Range: rings 13-50 mm, saddles 13-38 mm. Source: [Shulman1955], as [Treybal1980] equation 6.70.
+ * @remarks Range: rings 13-50 mm, saddles 13-38 mm. Source: [Shulman1955], as printed in [Treybal1980] chapter 6.
  */
 export function shulmanGasCoefficient(
   Ds: number,
@@ -41,7 +41,7 @@ export function shulmanGasCoefficient(
  * @param muL - Liquid viscosity, Pa s.
  * @param DL - Diffusivity in the liquid, m2/s.
  * @returns Coefficient, m/s.
- * @remarks Range as above. Source: [Shulman1955], as [Treybal1980] equation 6.72.
+ * @remarks Range as above. Source: [Shulman1955], as printed in [Treybal1980] chapter 6.
  */
 export function shulmanLiquidCoefficient(Ds: number, L: number, rhoL: number, muL: number, DL: number): number {
   const Re = (Ds * L) / muL;

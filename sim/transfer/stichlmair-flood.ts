@@ -24,7 +24,7 @@ const TOLERANCE = 1e-13;
  * @param c - Exponent of the friction factor at the flood point.
  * @returns P; dimensionless, usually 0.1-0.3. 0 when h0 alone fills the voids.
  * @remarks The left side falls with P and the right side rises: one root, found by bisection.
- * Source: [Stichlmair1989], equation 14 (= slope of one in the implicit pressure drop).
+ * Source: [Stichlmair1989] (= slope of one in the implicit pressure drop).
  */
 export function stichlmairFloodPressure(eps: number, h0: number, c: number): number {
   if (h0 >= eps) return 0;
@@ -52,7 +52,7 @@ export function stichlmairFloodPressure(eps: number, h0: number, c: number): num
  * @param muG - Gas viscosity, Pa s.
  * @returns Superficial gas velocity, m/s; 0 when the liquid alone fills the bed, infinite at uL = 0.
  * @remarks Range: as the pressure drop. Error: about 15 % of the velocity.
- * Source: [Stichlmair1989], equations 12 and 14.
+ * Source: [Stichlmair1989].
  */
 export function stichlmairFloodVelocity(
   packing: StichlmairPacking,

@@ -4,9 +4,9 @@ import { STANDARD_GRAVITY } from '../properties/constants.ts';
 import type { PackingGeometry } from './packing.ts';
 import { VOIDAGE_EXPONENT } from './stichlmair-pressure-drop.ts';
 
-/** Coefficient of the preload hold-up, [Stichlmair1989] equation 7. */
+/** Coefficient of the preload hold-up, [Stichlmair1989]. */
 const PRELOAD = 0.555;
-/** Coefficient of the loading term, [Stichlmair1989] equation 8. */
+/** Coefficient of the loading term, [Stichlmair1989]. */
 const LOADING = 20;
 
 /**
@@ -19,7 +19,7 @@ const LOADING = 20;
  * @returns Hold-up, m3/m3; total, static part included. Goes as uL^(2/3): infinite slope at uL = 0.
  * @remarks Range: uL to about 0.03 m/s, liquids near the viscosity of water (viscosity is not in it).
  *   Error: about 10-15 %.
- * Source: [Stichlmair1989], equation 7. Departs: nothing.
+ * Source: [Stichlmair1989]. Departs: nothing.
  */
 export function stichlmairPreloadHoldup(packing: PackingGeometry, uL: number): number {
   const voids = Math.exp(VOIDAGE_EXPONENT * Math.log(packing.eps));
@@ -34,7 +34,7 @@ export function stichlmairPreloadHoldup(packing: PackingGeometry, uL: number): n
  * @param gradient - Pressure gradient of the irrigated bed, Pa/m; its size is used.
  * @param rhoL - Liquid density, kg/m3.
  * @returns Factor, at least 1.
- * Source: [Stichlmair1989], equation 8.
+ * Source: [Stichlmair1989].
  */
 export function stichlmairLoadingFactor(gradient: number, rhoL: number): number {
   const P = gradient / (rhoL * STANDARD_GRAVITY);
@@ -58,7 +58,7 @@ export function stichlmairHoldup(packing: PackingGeometry, uL: number, gradient:
  * @returns Superficial liquid velocity, m/s; once differentiable at h = 0.
  * @remarks Range and error as the hold-up. The static share does not drain: carve it out with
  *   `drainageVelocity` in static-holdup.ts, which leaves normal flow unchanged.
- * Source: [Stichlmair1989], equations 7 and 8, inverted.
+ * Source: [Stichlmair1989], inverted.
  */
 export function stichlmairLiquidVelocity(packing: PackingGeometry, h: number, gradient: number, rhoL: number): number {
   if (h <= 0) return 0;

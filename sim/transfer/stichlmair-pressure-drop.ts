@@ -23,7 +23,7 @@ const FULL_SHARE = 0.98;
  * @param rhoG - Gas density, kg/m3.
  * @param muG - Gas viscosity, Pa s.
  * @returns Reynolds number.
- * Source: [Stichlmair1989], equation 4.
+ * Source: [Stichlmair1989].
  */
 export function stichlmairReynolds(packing: PackingGeometry, uG: number, rhoG: number, muG: number): number {
   return (Math.abs(uG) * rhoG * particleDiameter(packing)) / muG;
@@ -42,7 +42,7 @@ export function stichlmairReynolds(packing: PackingGeometry, uG: number, rhoG: n
  * @remarks Range: the constants' (turbulent gas flow in random and structured packing). Written as a sum
  *   of powers of uG, so that it is finite, zero and differentiable at uG = 0 (slope of the C1 term).
  *   Error: 5-10 % with constants of the same packing.
- * Source: [Stichlmair1989], equations 3-5. Departs: nothing.
+ * Source: [Stichlmair1989]. Departs: nothing.
  */
 export function stichlmairDryPressureDrop(packing: StichlmairPacking, uG: number, rhoG: number, muG: number): number {
   const dp = particleDiameter(packing);
@@ -62,7 +62,7 @@ export function stichlmairDryPressureDrop(packing: StichlmairPacking, uG: number
  * @param constants - C1..C3.
  * @param Re - Gas Reynolds number; not negative.
  * @returns Exponent between -1 and 0; at Re = 0 the limit of the leading term.
- * Source: [Stichlmair1989], equation 10.
+ * Source: [Stichlmair1989].
  */
 export function stichlmairExponent(constants: StichlmairConstants, Re: number): number {
   const root = Math.sqrt(Re);
@@ -83,7 +83,7 @@ export function stichlmairExponent(constants: StichlmairConstants, Re: number): 
  * @remarks Range: h below the voids. Beyond 98 % of the voids (a bed full of liquid, outside any
  *   correlation) ln F continues along its tangent: finite, increasing and smooth for a solver that
  *   strays; what flows in a flooded segment is the column model's decision.
- * Source: [Piche2001], restating [Stichlmair1989], equation 12. Departs: the exponent as printed in 1989
+ * Source: [Piche2001], restating [Stichlmair1989]. Departs: the exponent as printed in 1989
  *   does not reproduce that paper's own example; this form does.
  */
 export function stichlmairWetFactor(eps: number, c: number, h: number): number {

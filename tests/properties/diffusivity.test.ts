@@ -57,7 +57,7 @@ describe('gas diffusivity', () => {
   });
 
   it('of allyl chloride in air is that of the textbook example', () => {
-    // [Poling2001] example 11-2: 0.096 cm2/s at 298 K, 1 bar (0.0958 with more digits); measured 0.098.
+    // [Poling2001] chapter 11, example: 0.096 cm2/s at 298 K, 1 bar (0.0958 with more digits); measured 0.098.
     const v = diffusionVolume({ C: 3, H: 5, Cl: 1 });
     const D = 1e4 * fullerDiffusivity(298, 1e5, 76.53e-3, 28.97e-3, v, V_AIR);
     expect(relative(D, 0.0958)).toBeLessThan(0.01); // 0.2 % between two published constants, rounding

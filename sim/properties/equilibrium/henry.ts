@@ -22,7 +22,7 @@ export interface HenryConstant {
  * @returns Solubility, mol/(m3 Pa).
  * @remarks Range: some 30 K about 298.15 K; outside, extrapolates monotonically. Error: compiled values
  *   spread by 10-30 % between authors.
- * Source: [Sander2023], section 2.5. Departs: nothing.
+ * Source: [Sander2023]. Departs: nothing.
  */
 export function henrySolubility(constant: HenryConstant, T: number): number {
   return constant.H * Math.exp(constant.B * (1 / T - 1 / REFERENCE_TEMPERATURE));
@@ -36,7 +36,7 @@ export function henrySolubility(constant: HenryConstant, T: number): number {
  * @param constant - H and B of the solute.
  * @param solvent - Molar concentration of the pure solvent, mol/m3, with its relative slope.
  * @returns Pressure scale, Pa, and d ln K/dT = B/T^2 + d ln c/dT, 1/K.
- * @remarks Range and error as the solubility. Source: [Sander2023], section 2.4 (x = c/c_solvent).
+ * @remarks Range and error as the solubility. Source: [Sander2023] (x = c/c_solvent).
  */
 export function henryPressure(constant: HenryConstant, solvent: TemperatureFunction): TemperatureFunction {
   return {

@@ -17,7 +17,7 @@ export interface MonotoneCurve {
  * @param y - Ordinates.
  * @returns The curve; once continuously differentiable, monotone on each interval, exact for a line.
  * @remarks Error: third order between smooth points, second where the limiter acts.
- * Source: [FritschCarlson1980] with the slopes of [FritschButland1984], equation 5 (weighted for unequal
+ * Source: [FritschCarlson1980] with the slopes of [FritschButland1984] (weighted for unequal
  *   spacing). Departs: end slopes are the three-point formula, limited to three times the secant.
  */
 export function monotoneCubic(x: readonly number[], y: readonly number[]): MonotoneCurve {

@@ -24,7 +24,7 @@ export interface NrtlConstants {
  * @param x - Mole fraction of component 1; scalar.
  * @returns ln gamma1; 0 at x = 1.
  * @remarks Range: that of the data behind the constants. Error: 2-5 % inside.
- * Source: [Renon1968], equations 17 and 18. Departs: nothing.
+ * Source: [Renon1968]. Departs: nothing.
  */
 export function nrtlLogGamma(constants: NrtlConstants, T: number, x: number): number {
   const tau12 = constants.b12 / (GAS_CONSTANT * T);

@@ -75,7 +75,7 @@ export function vanLaarLaw(constants: VanLaarConstants, saturation: TemperatureF
  * @remarks Range: dilute to moderate x near the temperature of the Henry constant. At x = 1 the law gives
  *   K(T) exp(-A12), not the vapour pressure: not for pure solute. Error: that of the Henry constant at
  *   x -> 0, and a share of the misfit of A12 that grows with x.
- * Source: unsymmetric convention, [Prausnitz1999], section 6.4. Departs: constants of the boiling fit are
+ * Source: unsymmetric convention, [Prausnitz1999], chapter 6. Departs: constants of the boiling fit are
  *   kept at all temperatures.
  */
 export function vanLaarHenryLaw(constants: VanLaarConstants, henry: TemperatureFunction): SeparableLaw {
