@@ -34,11 +34,10 @@ export function createHermiteTable(
   functions.forEach((f, i) => {
     // Values on the grid with two nodes beyond each end, for the central differences.
     const value = Float64Array.from({ length: intervals + 5 }, (_, k) => f(lower + (k - 2) * spacing));
-    const slope = (k: number): number =>
-      (value[k]! - 8 * value[k + 1]! + 8 * value[k + 3]! - value[k + 4]!) / 12; // per spacing
+    const slope = (k: number): number => (value[k] - 8 * value[k + 1] + 8 * value[k + 3] - value[k + 4]) / 12; // per spacing
     for (let k = 0; k < intervals; k++) {
-      const v0 = value[k + 2]!;
-      const v1 = value[k + 3]!;
+      const v0 = value[k + 2];
+      const v1 = value[k + 3];
       const d0 = slope(k);
       const d1 = slope(k + 1);
       const at = 4 * (k * columns + i);
@@ -63,14 +62,14 @@ export function readHermiteTable(table: HermiteTable, x: number, out: Float64Arr
   let at = 4 * k * columns;
   if (u >= 0 && u <= 1) {
     for (let i = 0; i < columns; i++, at += 4) {
-      out[offset + i] = c[at]! + u * (c[at + 1]! + u * (c[at + 2]! + u * c[at + 3]!));
+      out[offset + i] = c[at] + u * (c[at + 1] + u * (c[at + 2] + u * c[at + 3]));
     }
     return;
   }
   const edge = u < 0 ? 0 : 1;
   for (let i = 0; i < columns; i++, at += 4) {
-    const value = c[at]! + edge * (c[at + 1]! + c[at + 2]! + c[at + 3]!);
-    const slope = c[at + 1]! + edge * (2 * c[at + 2]! + 3 * c[at + 3]!);
+    const value = c[at] + edge * (c[at + 1] + c[at + 2] + c[at + 3]);
+    const slope = c[at + 1] + edge * (2 * c[at + 2] + 3 * c[at + 3]);
     out[offset + i] = value + slope * (u - edge);
   }
 }
@@ -84,8 +83,8 @@ export function readHermiteColumn(table: HermiteTable, column: number, x: number
   if (k >= table.intervals) k = table.intervals - 1;
   u -= k;
   const at = 4 * (k * table.columns + column);
-  if (u >= 0 && u <= 1) return c[at]! + u * (c[at + 1]! + u * (c[at + 2]! + u * c[at + 3]!));
+  if (u >= 0 && u <= 1) return c[at] + u * (c[at + 1] + u * (c[at + 2] + u * c[at + 3]));
   const edge = u < 0 ? 0 : 1;
-  const slope = c[at + 1]! + edge * (2 * c[at + 2]! + 3 * c[at + 3]!);
-  return c[at]! + edge * (c[at + 1]! + c[at + 2]! + c[at + 3]!) + slope * (u - edge);
+  const slope = c[at + 1] + edge * (2 * c[at + 2] + 3 * c[at + 3]);
+  return c[at] + edge * (c[at + 1] + c[at + 2] + c[at + 3]) + slope * (u - edge);
 }

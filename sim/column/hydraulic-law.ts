@@ -1,0 +1,156 @@
+/**
+ * Hold-up and pressure drop of one segment as a drainage law: what lets liquid go, given the hold-up that is there and
+ * the gas that passes. The rising branch is a published correlation solved for the liquid rate. Past the flood point
+ * (where more hold-up drains slower) the segment passes no more than the capacity it would have at a higher gas rate,
+ * u_G / deflooding: a deliberate law, stated in the case, since no correlation holds there.
+ *
+ * Gas load enters as `dry`, the dry pressure gradient over the liquid's weight, rho_L g.
+ */
+
+/** What the law finds; one object reused. */
+export interface HydraulicState {
+  /** Superficial liquid velocity that leaves, and that can enter, m/s. */
+  demand: number;
+  supply: number;
+  /** Irrigated pressure gradient over rho_L g, uncapped. */
+  gradient: number;
+  /** 0 at low load, 1 at the flood point, above it beyond. */
+  loading: number;
+}
+
+export interface HydraulicLaw {
+  /**
+   * @param holdup - m3/m3; total.
+   * @param dry - Dry pressure gradient / (rho_L g).
+   * @param c - Friction exponent of the gas side (Stichlmair's c).
+   * @param out - Filled in place.
+   */
+  evaluate(holdup: number, dry: number, c: number, out: HydraulicState): void;
+  /** Hold-up that drains no further, m3/m3. */
+  readonly staticHoldup: number;
+  /** Liquid velocity at the flood point for a gas load, m/s. */
+  capacity(dry: number, c: number): number;
+}
+
+/** Parameters of Stichlmair, Bravo and Fair's drainage law. */
+export interface StichlmairDrainage {
+  readonly voidFraction: number;
+  /** m2/m3 */ readonly area: number;
+  readonly staticHoldup: number;
+  /** 0.555 and 20 in the paper. */
+  readonly holdupFactor: number;
+  readonly loadingFactor: number;
+  readonly deflooding: number;
+  /** Largest hold-up, m3/m3. */ readonly fullHoldup: number;
+  readonly gravity: number;
+}
+
+/** Share of the voids over which a filling segment closes. */
+const CLOSING_BAND = 0.03;
+/** Effective supply of a segment that takes all there is, m/s. */
+export const UNLIMITED_VELOCITY = 1e6;
+
+/**
+ * Stichlmair, Bravo and Fair's hold-up solved for the liquid velocity, with the static part carved out.
+ *
+ *   h0 = 0.555 (u^2 a / (g eps^4.65))^(1/3),  h = h0 [1 + 20 P^2],  P = dp/(rho_L g)
+ *   P  = dry [(1 - eps + h)/(1 - eps)]^((2 + c)/3) [eps/(eps - h)]^4.65    at the hold-up h that is there
+ *   u  = (g eps^4.65 / a)^(1/2) [hd / (0.555 (1 + 20 P^2))]^(3/2),   hd = h {1 - exp[-((h - hs)/(hs/2))^2]}
+ *
+ * hd as in `drainableHoldup`: nothing drains at or below hs, and from 3 hs on the law is the paper's to 1e-6.
+ *
+ * @remarks Below the flood point u rises with h; `loading` is the ratio of the two relative slopes, 1 at the flood point,
+ *   which makes it Stichlmair's own flood condition. Source: [Stichlmair1989]; static part [Engel2001].
+ *   Departs: carving out of the static part; the branch past the flood point (see the file's head).
+ */
+export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
+  const { voidFraction: eps, staticHoldup: hs, loadingFactor, fullHoldup } = p;
+  const scale = Math.sqrt((p.gravity * Math.pow(eps, 4.65)) / p.area);
+  const solid = 1 - eps;
+  const spread = Math.max(0.5 * hs, 1e-9);
+  const closing = CLOSING_BAND * eps;
+
+  /** Velocity, gradient and loading at a hold-up within (hs, full). */
+  let u = 0;
+  let gradient = 0;
+  let loading = 0;
+  const rising = (h: number, dry: number, c: number): void => {
+    let hd = h;
+    let slope = 1; // of hd
+    const above = (h - hs) / spread;
+    if (above <= 0) {
+      hd = 0;
+    } else if (above < 6) {
+      const fade = Math.exp(-above * above);
+      hd = h * (1 - fade);
+      slope = 1 - fade + (2 * h * above * fade) / spread;
+    }
+    const exponent = (2 + c) / 3;
+    const P = dry * Math.exp(exponent * Math.log((solid + h) / solid) + 4.65 * Math.log(eps / (eps - h)));
+    const lift = loadingFactor * P * P;
+    const kappa = exponent / (solid + h) + 4.65 / (eps - h);
+    const r = hd > 0 ? hd / (p.holdupFactor * (1 + lift)) : 0;
+    u = scale * r * Math.sqrt(r);
+    gradient = P;
+    loading = hd > 0 ? (2 * lift * kappa * hd) / ((1 + lift) * slope) : 0;
+  };
+  /** Hold-up at the flood point, where the loading is 1; bisection in (hs, full). */
+  const floodHoldup = (dry: number, c: number): number => {
+    let low = hs;
+    let high = fullHoldup;
+    for (let i = 0; i < 48; i++) {
+      const middle = 0.5 * (low + high);
+      rising(middle, dry, c);
+      if (loading < 1) low = middle;
+      else high = middle;
+    }
+    return 0.5 * (low + high);
+  };
+  const capacity = (dry: number, c: number): number => {
+    rising(floodHoldup(dry, c), dry, c);
+    return u;
+  };
+  const froth = 1 / (p.deflooding * p.deflooding);
+  return {
+    staticHoldup: hs,
+    capacity,
+    evaluate(holdup, dry, c, out) {
+      const h = holdup < fullHoldup ? holdup : fullHoldup;
+      rising(h > 0 ? h : 0, dry, c);
+      const here = u;
+      out.gradient = gradient;
+      out.loading = loading;
+      const load = loading;
+      if (load < 1) {
+        out.demand = here;
+        out.supply = UNLIMITED_VELOCITY;
+      } else {
+        const gradientHere = gradient;
+        const floor = capacity(dry * froth, c);
+        out.supply = here > floor ? here : floor;
+        out.demand = capacity(dry, c);
+        out.gradient = gradientHere;
+        out.loading = load;
+      }
+      const room = (fullHoldup - holdup) / closing;
+      if (room < 1) out.supply = room > 0 ? Math.min(out.supply, 10 * out.demand) * room : 0;
+    },
+  };
+}
+
+/** u = k h^n, no pressure drop, never floods but closes when full. For closed forms and user fits. */
+export function powerLawDrainage(k: number, n: number, fullHoldup: number, voidFraction: number): HydraulicLaw {
+  const closing = CLOSING_BAND * voidFraction;
+  return {
+    staticHoldup: 0,
+    capacity: () => UNLIMITED_VELOCITY,
+    evaluate(holdup, _dry, _c, out) {
+      out.demand = holdup > 0 ? k * Math.exp(n * Math.log(holdup)) : 0;
+      out.supply = UNLIMITED_VELOCITY;
+      out.gradient = 0;
+      out.loading = 0;
+      const room = (fullHoldup - holdup) / closing;
+      if (room < 1) out.supply = room > 0 ? 10 * out.demand * room : 0;
+    },
+  };
+}
