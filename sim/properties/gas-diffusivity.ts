@@ -1,7 +1,7 @@
 // Binary diffusivity in a dilute gas and the diffusion volumes it needs.
 
 /** Atomic diffusion volumes, dimensionless, [Fuller1969] as restated in [Poling2001] table 11-1. */
-export const ATOMIC_DIFFUSION_VOLUMES: Readonly<Record<string, number>> = {
+const ATOMIC_DIFFUSION_VOLUMES: Readonly<Record<string, number>> = {
   C: 15.9,
   H: 2.31,
   O: 6.11,

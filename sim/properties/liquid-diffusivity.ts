@@ -49,7 +49,7 @@ export function scaledDiffusivity(DRef: number, TRef: number, muRef: number, T: 
  *
  * @param T - Temperature, K; scalar.
  * @returns Diffusivity, m2/s.
- * @remarks Range 273-368 K; outside, extrapolates monotonically. Error: about 5 %.
+ * @remarks Range 273-368 K; outside, extrapolates monotonically. Error: order of 5 % (common practice, no source).
  * Source: [Versteeg1988]. Departs: nothing.
  */
 export function carbonDioxideDiffusivity(T: number): number {

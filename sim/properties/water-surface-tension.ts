@@ -1,7 +1,7 @@
 // Surface tension of ordinary water against its vapour, IAPWS R1-76.
 
 /** Critical temperature of water, K [R1-76]. */
-export const WATER_CRITICAL_TEMPERATURE = 647.096;
+const WATER_CRITICAL_TEMPERATURE = 647.096;
 
 /**
  * Surface tension of water.

@@ -24,7 +24,7 @@ const LOADING_POWER = 13;
  * @param rhoL - Liquid density, kg/m3.
  * @param muL - Liquid viscosity, Pa s.
  * @returns Hold-up, m3/m3; total. Goes as uL^0.57 or uL^0.63: infinite slope at 0.
- * @remarks Range: random and structured packing, uL to 0.06 m/s. Error: about 10 % with its own constants.
+ * @remarks Range: random and structured packing, uL to 0.06 m/s. Error: order of 10 % with its own constants (common practice, no source).
  * Source: [Billet1999]. Departs: branches change at Re = 5.08, where they meet, not at 5, where they jump
  *   by 0.1 %; so the law is continuous and can be inverted.
  */

@@ -33,7 +33,7 @@ export type BilletLiquid =
  * @param fluids - Densities and viscosities.
  * @param liquid - Fixed ratio or fixed liquid velocity.
  * @returns Superficial gas velocity, m/s; 0 when the liquid alone fills the film.
- * @remarks Range: random and structured packing. Error: about 10 % with its own constants.
+ * @remarks Range: random and structured packing. Error: order of 10 % with its own constants (common practice, no source).
  * Source: [Billet1999]. Departs: nothing known.
  */
 export function billetLoadingVelocity(
@@ -96,7 +96,7 @@ export function billetFloodHoldup(packing: PackingGeometry, uL: number, rhoL: nu
  * @param fluids - Densities and viscosities.
  * @param liquid - Fixed ratio or fixed liquid velocity.
  * @returns Superficial gas velocity, m/s; 0 when the liquid alone floods the bed.
- * @remarks Range: random and structured packing. Error: about 10 % with its own constants.
+ * @remarks Range: random and structured packing. Error: order of 10 % with its own constants (common practice, no source).
  * Source: [Billet1999]. Departs: nothing known.
  */
 export function billetFloodVelocity(

@@ -32,7 +32,7 @@ export function billetWallFactor(packing: PackingGeometry, DS: number): number {
  * @param muV - Gas viscosity, Pa s.
  * @param DS - Column diameter, m; Infinity for no wall.
  * @returns Pressure gradient, Pa/m; 0 at uV = 0.
- * @remarks Range: random and structured packing. Error: about 10 % with its own constants.
+ * @remarks Range: random and structured packing. Error: order of 10 % with its own constants (common practice, no source).
  * Source: [Billet1999].
  */
 export function billetDryPressureDrop(

@@ -5,7 +5,7 @@ import { STANDARD_GRAVITY } from '../properties/constants.ts';
 import type { PackingGeometry } from './packing.ts';
 
 /** Hydraulic diameter 4 eps/a, m. */
-export function hydraulicDiameter(packing: PackingGeometry): number {
+function hydraulicDiameter(packing: PackingGeometry): number {
   return (4 * packing.eps) / packing.a;
 }
 

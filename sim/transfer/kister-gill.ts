@@ -15,7 +15,7 @@ const SMALL_PACKING_VALUE = 2;
  *
  * @param Fp - Packing factor, 1/m.
  * @returns Pressure gradient, Pa/m.
- * @remarks Range: Fp 33-200 1/m (10-60 1/ft), air-water like systems. Error: 10-20 %. The two branches
+ * @remarks Range: Fp 33-200 1/m (10-60 1/ft), air-water like systems. Error: 10-20 % (common practice, no source). The two branches
  *   meet within 1 % at 60 1/ft. Another restatement has 0.12 instead of 0.115.
  * Source: [Kister1991], from memory. Departs: SI at the edges.
  */

@@ -5,7 +5,7 @@ import { STANDARD_GRAVITY } from '../properties/constants.ts';
 import type { PackingGeometry } from './packing.ts';
 
 /** Nominal size below which the gas coefficient takes its smaller constant, m [Onda1968]. */
-export const SMALL_PACKING = 0.015;
+const SMALL_PACKING = 0.015;
 /** Gas-side constant at and above that size, [Onda1968] equation 3. */
 const GAS_CONSTANT_LARGE = 5.23;
 /** Gas-side constant below it, [Onda1968] p 58. */
@@ -27,17 +27,17 @@ export const ONDA_RANGES: readonly GroupRange[] = [
 ];
 
 /** Liquid Reynolds number on the dry area, L/(a muL); L in kg/(m2 s). */
-export function ondaReynolds(a: number, L: number, muL: number): number {
+function ondaReynolds(a: number, L: number, muL: number): number {
   return L / (a * muL);
 }
 
 /** Liquid Froude number, L^2 a/(rhoL^2 g). */
-export function ondaFroude(a: number, L: number, rhoL: number): number {
+function ondaFroude(a: number, L: number, rhoL: number): number {
   return (L * L * a) / (rhoL * rhoL * STANDARD_GRAVITY);
 }
 
 /** Liquid Weber number, L^2/(rhoL sigma a). */
-export function ondaWeber(a: number, L: number, rhoL: number, sigma: number): number {
+function ondaWeber(a: number, L: number, rhoL: number, sigma: number): number {
   return (L * L) / (rhoL * sigma * a);
 }
 
@@ -57,7 +57,7 @@ export function ondaWeber(a: number, L: number, rhoL: number, sigma: number): nu
  *   the published form. With L^0.4 replaced by L (L^2 + LSmooth^2)^-0.3 the slope at zero is finite and
  *   the area at L = 10 LSmooth is at most 0.3 % lower.
  * @returns Wetted area, m2/m3; 0 at L = 0, below a.
- * @remarks Range: `ONDA_RANGES`; outside, extrapolates between 0 and a. Error: 20 %.
+ * @remarks Range: `ONDA_RANGES`; outside, extrapolates between 0 and a. Error: 20 % (from memory).
  * Source: [Onda1968], equation 1. Departs: g = 9.80665; the optional smoothing.
  */
 export function ondaWettedArea(
@@ -92,7 +92,7 @@ export function ondaWettedArea(
  * @param muL - Liquid viscosity, Pa s.
  * @param DL - Diffusivity of the component in the liquid, m2/s.
  * @returns Coefficient, m/s; 0 at L = 0 or aw = 0.
- * @remarks Range: random packing 4-50 mm. Error: 20 %. kL goes as DL^0.5: evaluate once, scale for others.
+ * @remarks Range: random packing 4-50 mm. Error: 20 % (from memory). kL goes as DL^0.5: evaluate once, scale for others.
  * Source: [Onda1968], equation 2 (wetted, not total, area in the Reynolds number). Departs: nothing.
  */
 export function ondaLiquidCoefficient(
@@ -123,7 +123,7 @@ export function ondaLiquidCoefficient(
  * @param muG - Gas viscosity, Pa s.
  * @param DG - Diffusivity of the component in the gas, m2/s.
  * @returns Coefficient, m/s; divide by R T for mol/(m2 s Pa). 0 at G = 0, with infinite slope.
- * @remarks Range: random packing 4-50 mm. Error: 30 %. kc goes as DG^(2/3): evaluate once, scale.
+ * @remarks Range: random packing 4-50 mm. Error: 30 % (from memory). kc goes as DG^(2/3): evaluate once, scale.
  * Source: [Onda1968], equation 3 and p 58. Departs: nothing.
  */
 export function ondaGasCoefficient(

@@ -29,7 +29,7 @@ const C4 = 2.7e-5;
  * @param Fpd - Dry packing factor, 1/m: not the packing factor of the flood charts.
  * @returns Pressure gradient, Pa/m; as G^2 for a dry bed.
  * @remarks Range: Fpd 50-650 1/m and about atmospheric pressure; the paper has further rules outside, not
- *   included: do not use it there. Error: 20 %.
+ *   included: do not use it there. Error: order of 20 % (common practice, no source).
  * Source: [Robbins1991]. Departs: SI at the edges.
  */
 export function robbinsPressureDrop(

@@ -26,7 +26,7 @@ const TOLERANCE = 1e-13;
  * @remarks The left side falls with P and the right side rises: one root, found by bisection.
  * Source: [Stichlmair1989] (= slope of one in the implicit pressure drop).
  */
-export function stichlmairFloodPressure(eps: number, h0: number, c: number): number {
+function stichlmairFloodPressure(eps: number, h0: number, c: number): number {
   if (h0 >= eps) return 0;
   let low = 0;
   let high = Math.sqrt((eps / h0 - 1) / 20);
@@ -51,7 +51,7 @@ export function stichlmairFloodPressure(eps: number, h0: number, c: number): num
  * @param rhoG - Gas density, kg/m3.
  * @param muG - Gas viscosity, Pa s.
  * @returns Superficial gas velocity, m/s; 0 when the liquid alone fills the bed, infinite at uL = 0.
- * @remarks Range: as the pressure drop. Error: about 15 % of the velocity.
+ * @remarks Range: as the pressure drop. Error: order of 15 % of the velocity (common practice, no source).
  * Source: [Stichlmair1989].
  */
 export function stichlmairFloodVelocity(

@@ -18,7 +18,7 @@ const LOADING = 20;
  * @param uL - Superficial liquid velocity, m/s; scalar, not negative.
  * @returns Hold-up, m3/m3; total, static part included. Goes as uL^(2/3): infinite slope at uL = 0.
  * @remarks Range: uL to about 0.03 m/s, liquids near the viscosity of water (viscosity is not in it).
- *   Error: about 10-15 %.
+ *   Error: order of 15 % (common practice, no source).
  * Source: [Stichlmair1989]. Departs: nothing.
  */
 export function stichlmairPreloadHoldup(packing: PackingGeometry, uL: number): number {

@@ -41,7 +41,7 @@ export function stichlmairReynolds(packing: PackingGeometry, uG: number, rhoG: n
  * @returns Pressure gradient, Pa/m; odd in uG.
  * @remarks Range: the constants' (turbulent gas flow in random and structured packing). Written as a sum
  *   of powers of uG, so that it is finite, zero and differentiable at uG = 0 (slope of the C1 term).
- *   Error: 5-10 % with constants of the same packing.
+ *   Error: order of 10 % with constants of the same packing (common practice, no source).
  * Source: [Stichlmair1989]. Departs: nothing.
  */
 export function stichlmairDryPressureDrop(packing: StichlmairPacking, uG: number, rhoG: number, muG: number): number {

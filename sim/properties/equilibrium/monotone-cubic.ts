@@ -52,7 +52,7 @@ function endSlope(hNear: number, hFar: number, near: number, far: number): numbe
 }
 
 /** Index of the interval that holds `at`; the first or the last when it lies outside. */
-export function interval(x: Float64Array, at: number): number {
+function interval(x: Float64Array, at: number): number {
   let low = 0;
   let high = x.length - 1;
   while (high - low > 1) {

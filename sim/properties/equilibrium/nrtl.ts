@@ -23,7 +23,7 @@ export interface NrtlConstants {
  * @param T - Temperature, K; scalar.
  * @param x - Mole fraction of component 1; scalar.
  * @returns ln gamma1; 0 at x = 1.
- * @remarks Range: that of the data behind the constants. Error: 2-5 % inside.
+ * @remarks Range: that of the data behind the constants. Error: order of 5 % inside (common practice, no source).
  * Source: [Renon1968]. Departs: nothing.
  */
 export function nrtlLogGamma(constants: NrtlConstants, T: number, x: number): number {
@@ -38,7 +38,7 @@ export function nrtlLogGamma(constants: NrtlConstants, T: number, x: number): nu
 }
 
 /** d ln gamma1 / dx1 of the equation above; dimensionless. */
-export function nrtlLogGammaSlope(constants: NrtlConstants, T: number, x: number): number {
+function nrtlLogGammaSlope(constants: NrtlConstants, T: number, x: number): number {
   const tau12 = constants.b12 / (GAS_CONSTANT * T);
   const tau21 = constants.b21 / (GAS_CONSTANT * T);
   const G12 = Math.exp(-constants.alpha * tau12);

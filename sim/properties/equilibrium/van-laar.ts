@@ -31,7 +31,7 @@ export function vanLaarLogGamma(constants: VanLaarConstants, x: number): number 
 }
 
 /** d ln gamma1 / dx1 of the equation above; dimensionless. Not positive for A12, A21 > 0. */
-export function vanLaarLogGammaSlope(constants: VanLaarConstants, x: number): number {
+function vanLaarLogGammaSlope(constants: VanLaarConstants, x: number): number {
   const { A12, A21 } = constants;
   const sum = A12 * x + A21 * (1 - x);
   const share = (A21 * (1 - x)) / sum;

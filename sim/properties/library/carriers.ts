@@ -100,7 +100,7 @@ export const CARRIERS: Readonly<Record<string, Carrier>> = {
 };
 
 /** Vapour pressure of a carrier, Pa; infinite above its critical point or where none is needed. */
-export function carrierSaturationPressure(carrier: Carrier, T: number): number {
+function carrierSaturationPressure(carrier: Carrier, T: number): number {
   if (carrier.saturation === undefined || T >= carrier.criticalTemperature.value) return Infinity;
   const law = carrier.saturation.value;
   return law === 'IF97' ? waterSaturationPressure(T) : antoinePressure(law, T);

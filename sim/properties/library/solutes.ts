@@ -12,7 +12,7 @@ import { computed, fromMemory, seen } from '../provenance.ts';
 import type { Sourced } from '../provenance.ts';
 
 /** A liquid diffusivity with the state it belongs to; D mu/T carries it elsewhere. */
-export interface LiquidDiffusivity {
+interface LiquidDiffusivity {
   /** m2/s. */
   readonly D: number;
   /** K. */
