@@ -18,7 +18,7 @@ import type { IvpProblem } from './problem.ts';
 import { createStageNewton } from './stage-newton.ts';
 import { stageSolver } from './stage-solver.ts';
 import type { StepHistory } from './step-size.ts';
-import { KEEP_STEP_BELOW, proposedStep, remember } from './step-size.ts';
+import { KEEP_STEP_BELOW, NO_HISTORY, proposedStep, remember } from './step-size.ts';
 import type { MethodMemory, Stepper } from './stepper.ts';
 
 /**
@@ -152,7 +152,7 @@ function createEsdirkMethod(problem: IvpProblem, tableau: EsdirkTableau, options
     const norm = weightedRms(error, weights);
     worst = worstComponent(error, weights);
     if (!Number.isFinite(norm) || firstNotFinite(next, size) >= 0) return 'not-finite';
-    proposal = proposedStep(h, norm, estimateOrder, history);
+    proposal = proposedStep(h, norm, estimateOrder, clipped ? NO_HISTORY : history);
     if (norm > 1) return 'rejected';
     stepNewton = newton.slowest;
     if (stepNewton <= KEEP_JACOBIAN_BELOW && proposal >= h && proposal < KEEP_STEP_BELOW * h) proposal = h;

@@ -14,7 +14,7 @@ import { linearSize } from './problem.ts';
 import type { RosenbrockTableau } from './rosenbrock-tableau.ts';
 import { stageSolver } from './stage-solver.ts';
 import type { StepHistory } from './step-size.ts';
-import { proposedStep, remember } from './step-size.ts';
+import { NO_HISTORY, proposedStep, remember } from './step-size.ts';
 import type { MethodMemory, Stepper } from './stepper.ts';
 import { restoreArray, restoreNumber } from './memory.ts';
 
@@ -114,7 +114,7 @@ function createRosenbrockMethod(
     const norm = weightedRms(error, weights);
     worst = worstComponent(error, weights);
     if (!Number.isFinite(norm) || firstNotFinite(next, size) >= 0) return 'not-finite';
-    proposal = proposedStep(h, norm, embeddedOrder + 1, history);
+    proposal = proposedStep(h, norm, embeddedOrder + 1, clipped ? NO_HISTORY : history);
     if (norm > 1) return 'rejected';
     if (!clipped) remember(history, h, norm);
     return 'accepted';

@@ -41,6 +41,9 @@ export function proposedStep(h: number, error: number, order: number, history: R
   return h * Math.min(MAX_GROWTH, Math.max(MIN_SHRINK, factor));
 }
 
+/** The history of a step that was clipped: the trend over steps of unlike size says nothing. */
+export const NO_HISTORY: Readonly<StepHistory> = { h: 0, error: 1 };
+
 /** Records an accepted step. */
 export function remember(history: StepHistory, h: number, error: number): void {
   history.h = h;
