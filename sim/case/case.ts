@@ -6,6 +6,7 @@
 
 /** A property of temperature as data: a library function by name, a constant, or points to interpolate. */
 export type Curve =
+  /** Name as in `properties/library/curves.ts`: `water.density`, `air.viscosity`, `steam.molar-heat-capacity`. */
   | { readonly kind: 'library'; readonly id: string }
   | { readonly kind: 'constant'; readonly value: number }
   | {
@@ -382,6 +383,7 @@ export interface Scenario {
 export interface Uncertain {
   readonly path: string;
   readonly distribution: 'normal' | 'uniform' | 'triangular' | 'lognormal';
+  /** Whether `low` and `high` are factors on the case's value, or values in SI. */ readonly as: 'factor' | 'value';
   readonly low: number;
   readonly high: number;
   readonly source: string;
