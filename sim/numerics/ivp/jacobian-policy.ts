@@ -68,7 +68,8 @@ export function createJacobianPolicy(problem: IvpProblem, solver: ShiftedSolver,
       fresh = false;
     },
     save() {
-      return { jacobianUsable: usable ? 1 : 0, jacobianTime: takenTime, factoredShift, jacobianAt: [...takenAt] };
+      if (!usable) return { jacobianUsable: 0 };
+      return { jacobianUsable: 1, jacobianTime: takenTime, factoredShift, jacobianAt: [...takenAt] };
     },
     restore(memory) {
       usable = false;

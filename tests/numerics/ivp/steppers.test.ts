@@ -52,7 +52,8 @@ describe.each(steppers)('$name', (method) => {
       expect(stepper.t).toBe(problem.end);
       const { steps, rejected } = stepper.stats;
       // Bounds on work: about twice what was seen, so that a change that doubles it is noticed.
-      if (rtol === 1e-4) expect(steps).toBeLessThan(method.order === 2 || method.order === 3 ? 1400 : 700);
+      const affordable = method.order === 2 || method.order === 3 ? 1400 : 700;
+      expect(steps).toBeLessThan(rtol === 1e-4 ? affordable : Infinity);
       expect(rejected).toBeLessThan(20 + 0.5 * steps);
       const error = endError(problem, stepper.y);
       // A local tolerance is not a bound on the global error: the Oregonator multiplies it by 100, the others by 30.
@@ -92,7 +93,7 @@ describe.each(steppers)('$name', (method) => {
       const resumed = create();
       resumed.restore(JSON.parse(saved[from]!) as StepperState);
       for (let k = from; k < trace.length; k++) {
-        if (k > from) expect(JSON.stringify(resumed.save())).toBe(saved[k]);
+        expect(JSON.stringify(resumed.save())).toBe(saved[k]);
         resumed.step(40);
         expect(record(resumed)).toBe(trace[k]);
       }
@@ -260,19 +261,18 @@ test('Rosenbrock methods keep their order on a nonlinear problem that depends on
 });
 
 test('ROS34PW2 keeps order 3 with a wrong Jacobian, the others do not', () => {
+  // No f_t either: with any matrix allowed, that of the system with t among the states may have a column of zeros.
   const wrong: IvpProblem = {
-    ...bell,
+    size: 1,
+    pattern: densePattern(1),
+    rhs: (t, y, f) => bell.rhs(t, y, f),
     jacobian(t, y, v) {
       v[0] = -3 * t * y[0]! - 0.5;
     },
   };
   const orderOf = (name: string): number => {
     const method = steppers.find((candidate) => candidate.name === name)!;
-    // A W-method needs no f_t either, if the matrix may be anything: leave it out.
-    const { timeDerivative: _left, ...autonomousForm } = wrong;
-    return halvingOrder(
-      fixedStepErrors(method, autonomousForm, 1, (t) => 1 / (1 + t * t), [1 / 32, 1 / 64, 1 / 128], [1]),
-    );
+    return halvingOrder(fixedStepErrors(method, wrong, 1, (t) => 1 / (1 + t * t), [1 / 32, 1 / 64, 1 / 128], [1]));
   };
   expect(orderOf('ROS34PW2')).toBeGreaterThan(2.9);
   expect(orderOf('RODAS4')).toBeLessThan(2.5);
