@@ -94,6 +94,49 @@ export function eliminateFourFromOne(
   }
 }
 
+/** Three pivot rows from two rows. */
+export function eliminateThreeFromTwo(
+  values: Float64Array,
+  rowA: number,
+  rowB: number,
+  places: Int32Array,
+  k: number,
+  pivotRow: number,
+  stride: number,
+  inverse: Float64Array,
+  at: number,
+): void {
+  const u1 = pivotRow + stride;
+  const u2 = u1 + stride;
+  const u01 = values[pivotRow + k + 1];
+  const u02 = values[pivotRow + k + 2];
+  const u12 = values[u1 + k + 2];
+  const first = places[k];
+  const placeA = rowA + first;
+  const placeB = rowB + first;
+  const a0 = values[placeA] * inverse[at];
+  const a1 = (values[placeA + 1] - a0 * u01) * inverse[at + 1];
+  const a2 = (values[placeA + 2] - a0 * u02 - a1 * u12) * inverse[at + 2];
+  const b0 = values[placeB] * inverse[at];
+  const b1 = (values[placeB + 1] - b0 * u01) * inverse[at + 1];
+  const b2 = (values[placeB + 2] - b0 * u02 - b1 * u12) * inverse[at + 2];
+  values[placeA] = a0;
+  values[placeA + 1] = a1;
+  values[placeA + 2] = a2;
+  values[placeB] = b0;
+  values[placeB + 1] = b1;
+  values[placeB + 2] = b2;
+  const length = places.length;
+  for (let t = k + 3; t < length; t++) {
+    const place = places[t];
+    const v0 = values[pivotRow + t];
+    const v1 = values[u1 + t];
+    const v2 = values[u2 + t];
+    values[rowA + place] -= a0 * v0 + a1 * v1 + a2 * v2;
+    values[rowB + place] -= b0 * v0 + b1 * v1 + b2 * v2;
+  }
+}
+
 /** Two pivot rows from two rows. */
 export function eliminateTwoFromTwo(
   values: Float64Array,

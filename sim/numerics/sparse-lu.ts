@@ -9,6 +9,7 @@ import {
   eliminateFourFromOne,
   eliminateFourFromTwo,
   eliminateOneFromOne,
+  eliminateThreeFromTwo,
   eliminateTwoFromTwo,
 } from './panel-kernels.ts';
 import type { ShiftedSolver } from './shifted-solver.ts';
@@ -128,6 +129,17 @@ function eliminate(
     }
     if (r < rLast) eliminateFourFromOne(values, row, places, k, pivotRow, stride, inverse, at);
   }
+  if (k + 3 === to) {
+    const pivotRow = start + k * stride;
+    const at = pivots.first + k;
+    let row = panel.base + rFirst * width;
+    let r = rFirst;
+    for (; r + 2 <= rLast; r += 2, row += 2 * width) {
+      eliminateThreeFromTwo(values, row, row + width, places, k, pivotRow, stride, inverse, at);
+    }
+    if (r < rLast) eliminateSingly(values, row, places, k, to, start, stride, inverse, pivots.first);
+    return;
+  }
   for (; k + 2 <= to; k += 2) {
     const pivotRow = start + k * stride;
     const at = pivots.first + k;
@@ -136,10 +148,7 @@ function eliminate(
     for (; r + 2 <= rLast; r += 2, row += 2 * width) {
       eliminateTwoFromTwo(values, row, row + width, places, k, pivotRow, stride, inverse, at);
     }
-    if (r < rLast) {
-      eliminateOneFromOne(values, row, places, k, pivotRow, inverse, at);
-      eliminateOneFromOne(values, row, places, k + 1, pivotRow + stride, inverse, at + 1);
-    }
+    if (r < rLast) eliminateSingly(values, row, places, k, k + 2, start, stride, inverse, pivots.first);
   }
   if (k < to) {
     const pivotRow = start + k * stride;
@@ -147,6 +156,23 @@ function eliminate(
     for (let r = rFirst; r < rLast; r++, row += width) {
       eliminateOneFromOne(values, row, places, k, pivotRow, inverse, pivots.first + k);
     }
+  }
+}
+
+/** Eliminates pivot rows `from` .. `to`-1 from one row, one after the other. */
+function eliminateSingly(
+  values: Float64Array,
+  row: number,
+  places: Int32Array,
+  from: number,
+  to: number,
+  start: number,
+  stride: number,
+  inverse: Float64Array,
+  first: number,
+): void {
+  for (let k = from; k < to; k++) {
+    eliminateOneFromOne(values, row, places, k, start + k * stride, inverse, first + k);
   }
 }
 
