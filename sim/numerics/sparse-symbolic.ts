@@ -32,7 +32,7 @@ export interface Panel {
 }
 
 /** One earlier panel as seen from a later one. */
-export interface PanelSource {
+interface PanelSource {
   readonly panel: Panel;
   /** Position, within a row of the later panel, of each column of the earlier one from its own first on. */
   readonly places: Int32Array;

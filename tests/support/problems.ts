@@ -60,14 +60,14 @@ function networkProblem({ constants, factors, balance }: Network): IvpProblem {
 }
 
 /** Robertson's autocatalysis [Robertson1966]; y1 + y2 + y3 is conserved. */
-export const robertson: IvpProblem = networkProblem({
+const robertson: IvpProblem = networkProblem({
   constants: [0.04, 1e4, 3e7],
   factors: [[0], [1, 2], [1, 1]],
   balance: [[-1, 2], [1, -2, -3], [3]],
 });
 
 /** Robertson's problem to t = 40; end value computed with two codes at rtol 1e-12. */
-export const robertsonShort: TestProblem = {
+const robertsonShort: TestProblem = {
   name: 'Robertson to 40',
   problem: robertson,
   start: [1, 0, 0],
@@ -231,7 +231,7 @@ export const vanDerPolScaled: TestProblem = {
 };
 
 /** Van der Pol's oscillator in its own time, mu = 1000. */
-export const vanDerPolUnscaled: TestProblem = {
+const vanDerPolUnscaled: TestProblem = {
   name: 'van der Pol, mu 1000',
   problem: vanDerPol(1000, 1),
   start: [2, 0],

@@ -18,7 +18,10 @@ export interface EsdirkTableau {
   readonly a: readonly (readonly number[])[];
   /** Weights of the embedded method, length s. */
   readonly bEmbedded: readonly number[];
-  /** True when the error estimate is to be multiplied by (I - h gamma J)^-1, for an embedded method that is not damped. */
+  /**
+   * True when the error estimate is to be multiplied by (I - h gamma J)^-1 [HoseaShampine1996]: where a state off the slow
+   * manifold, with a slope on it, would otherwise show undamped in the estimate.
+   */
   readonly filtersError: boolean;
 }
 
@@ -120,7 +123,10 @@ const B5_EMBEDDED = [
   1914490192573 / 13754262428401,
 ];
 
-/** ESDIRK5(4)7L[2]SA2: 7 stages, order 5(4), gamma 23/125. Coefficients: [KennedyCarpenter2019]. */
+/**
+ * ESDIRK5(4)7L[2]SA2: 7 stages, order 5(4), gamma 23/125. Coefficients: [KennedyCarpenter2019]. The filter is not theirs:
+ * without it a state one tolerance off the slow manifold gives an estimate of 1.76 tolerances at any step.
+ */
 export const ESDIRK5: EsdirkTableau = {
   name: 'ESDIRK5(4)7L[2]SA2',
   order: 5,
@@ -150,7 +156,7 @@ export const ESDIRK5: EsdirkTableau = {
     ],
   ]),
   bEmbedded: [B5_EMBEDDED.reduce((rest, x) => rest - x, 1), ...B5_EMBEDDED],
-  filtersError: false,
+  filtersError: true,
 };
 
 /** b - bEmbedded: the weights of the error estimate. */

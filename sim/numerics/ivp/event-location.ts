@@ -22,7 +22,7 @@ export interface Crossing {
 }
 
 /** How g crossed from one value to the next, if it did. A start at zero is no crossing, an end at zero is one. */
-export function crossingBetween(g0: number, g1: number): 'rising' | 'falling' | undefined {
+function crossingBetween(g0: number, g1: number): 'rising' | 'falling' | undefined {
   if (g0 < 0 && g1 >= 0) return 'rising';
   if (g0 > 0 && g1 <= 0) return 'falling';
   return undefined;

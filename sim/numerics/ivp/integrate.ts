@@ -14,7 +14,7 @@ export interface EventFunction {
 }
 
 /** A located event. */
-export interface EventRecord {
+interface EventRecord {
   readonly name: string;
   /** First time, within the tolerance, at which g has crossed. */
   readonly t: number;
@@ -38,7 +38,7 @@ export interface IntegrationPlan {
 }
 
 /** Why the integration ended. */
-export type IntegrationOutcome =
+type IntegrationOutcome =
   | { readonly kind: 'reached-end' }
   | { readonly kind: 'event'; readonly name: string }
   | { readonly kind: 'failed'; readonly failure: StepFailure };

@@ -35,7 +35,7 @@ export interface RosenbrockTableau {
 }
 
 /** The form with k_i = f(...) h + h J sum_j gamma_ij k_j in which theory and most papers write [HairerWanner1996, IV.7.4]. */
-export interface StandardRosenbrock {
+interface StandardRosenbrock {
   /** s x s, strictly lower. */
   readonly alpha: readonly (readonly number[])[];
   /** s x s, lower, constant diagonal gamma. */
@@ -57,7 +57,7 @@ function timesInverse(row: readonly number[], lower: readonly (readonly number[]
 }
 
 /** The coefficients that follow from the standard form: A = alpha Gamma^-1, C = diag(1/gamma) - Gamma^-1, m = b Gamma^-1. */
-export function transformed(
+function transformed(
   standard: StandardRosenbrock,
 ): Pick<RosenbrockTableau, 'gamma' | 'alpha' | 'a' | 'c' | 'd' | 'm' | 'e'> {
   const { alpha, gamma, b, bEmbedded } = standard;

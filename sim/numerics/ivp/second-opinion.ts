@@ -28,7 +28,7 @@ export interface ExplicitOptions {
 }
 
 /** Why it gave up; `t` is the last time with a good state. */
-export interface ExplicitFailure {
+interface ExplicitFailure {
   readonly kind: 'not-finite' | 'work-limit';
   readonly t: number;
   /** First component that was not finite, or -1. */

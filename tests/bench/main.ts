@@ -1,0 +1,4 @@
+// Benchmarks: `npm run bench`.
+import { stepperTable } from './steppers.ts';
+
+console.log(stepperTable());
