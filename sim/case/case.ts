@@ -94,7 +94,8 @@ export interface Solute {
   readonly liquidDiffusivity: { readonly value: number; readonly temperature: number } | undefined;
   /** Molar volume at the boiling point, cm3/mol as published (Wilke-Chang). */ readonly boilingVolume: number;
   /** In the carrier, m2/s at the stated T and p; Fuller when undefined. */
-  readonly gasDiffusivity: { readonly value: number; readonly temperature: number; readonly pressure: number } | undefined;
+  readonly gasDiffusivity:
+    { readonly value: number; readonly temperature: number; readonly pressure: number } | undefined;
   readonly diffusionVolume: number;
   readonly equilibrium: Equilibrium;
   /** Heat given off on absorption, J/mol; undefined: from the equilibrium's temperature slope. */
@@ -113,7 +114,14 @@ export interface Packing {
   readonly friction: { readonly C1: number; readonly C2: number; readonly C3: number } | undefined;
   /** Billet-Schultes constants. */
   readonly billet:
-    | { readonly CL: number; readonly CV: number; readonly Ch: number; readonly Cp0: number; readonly CS: number; readonly CFl: number }
+    | {
+        readonly CL: number;
+        readonly CV: number;
+        readonly Ch: number;
+        readonly Cp0: number;
+        readonly CS: number;
+        readonly CFl: number;
+      }
     | undefined;
   /** N/m */ readonly criticalSurfaceTension: number;
   /** Of the solid, J/(m3 K). */ readonly solidHeatCapacity: number;
@@ -152,7 +160,12 @@ export type Transfer =
       readonly scaleKL: number;
       readonly scaleKG: number;
     }
-  | { readonly model: 'billet-schultes'; readonly scaleArea: number; readonly scaleKL: number; readonly scaleKG: number }
+  | {
+      readonly model: 'billet-schultes';
+      readonly scaleArea: number;
+      readonly scaleKL: number;
+      readonly scaleKG: number;
+    }
   | {
       readonly model: 'measured';
       /** How the user stated it. NOG and HOG are taken at the design gas rate. */
@@ -239,13 +252,29 @@ export interface LiquidSupply {
     /** m2 */ readonly area: number;
     /** m */ readonly normalLevel: number;
     /** m; above it liquid leaves by the overflow. */ readonly overflowLevel: number;
-    readonly drain: { readonly tag: string; /** m3/s, open at normal level */ readonly capacity: number; readonly stroke: number };
+    readonly drain: {
+      readonly tag: string;
+      /** m3/s, open at normal level */ readonly capacity: number;
+      readonly stroke: number;
+    };
   };
   readonly cooler:
-    | { readonly tag: string; /** Share of the way to the coolant's temperature, 0..1. */ readonly effectiveness: number; readonly coolantTemperature: number }
+    | {
+        readonly tag: string;
+        /** Share of the way to the coolant's temperature, 0..1. */ readonly effectiveness: number;
+        readonly coolantTemperature: number;
+      }
     | undefined;
-  /** Recirculated only. */ readonly makeUp: (Stream & { readonly tag: string; readonly capacity: number; readonly stroke: number }) | undefined;
-  readonly bleed: { readonly tag: string; /** Design rate, m3/s. */ readonly rate: number; readonly capacity: number; readonly stroke: number } | undefined;
+  /** Recirculated only. */ readonly makeUp:
+    (Stream & { readonly tag: string; readonly capacity: number; readonly stroke: number }) | undefined;
+  readonly bleed:
+    | {
+        readonly tag: string;
+        /** Design rate, m3/s. */ readonly rate: number;
+        readonly capacity: number;
+        readonly stroke: number;
+      }
+    | undefined;
   readonly emergencyWater: (Stream & { readonly tag: string; readonly stroke: number }) | undefined;
 }
 
@@ -254,9 +283,22 @@ export type Measured =
   | { readonly quantity: 'gas-outlet' | 'gas-inlet' | 'liquid-outlet' | 'sump-strength'; readonly solute: number }
   | {
       readonly quantity:
-        | 'bed-dp' | 'liquid-flow' | 'gas-flow' | 'sump-level' | 'sump-temperature' | 'liquid-inlet-temperature'
-        | 'gas-outlet-temperature' | 'gas-inlet-temperature' | 'liquid-outlet-temperature' | 'distributor-volume'
-        | 'flood-approach' | 'carry-over' | 'pump-speed' | 'make-up-flow' | 'bleed-flow' | 'holdup';
+        | 'bed-dp'
+        | 'liquid-flow'
+        | 'gas-flow'
+        | 'sump-level'
+        | 'sump-temperature'
+        | 'liquid-inlet-temperature'
+        | 'gas-outlet-temperature'
+        | 'gas-inlet-temperature'
+        | 'liquid-outlet-temperature'
+        | 'distributor-volume'
+        | 'flood-approach'
+        | 'carry-over'
+        | 'pump-speed'
+        | 'make-up-flow'
+        | 'bleed-flow'
+        | 'holdup';
     };
 
 export interface Instrument {
@@ -267,7 +309,8 @@ export interface Instrument {
   readonly deadTime: number;
   readonly bias: number;
   /** Per second. */ readonly drift: number;
-  readonly noise: { /** Standard deviation. */ readonly sigma: number; /** s */ readonly correlationTime: number } | undefined;
+  readonly noise:
+    { /** Standard deviation. */ readonly sigma: number; /** s */ readonly correlationTime: number } | undefined;
   /** Clipping range. */ readonly range: readonly [number, number] | undefined;
   /** s; undefined: continuous. */ readonly sampleInterval: number | undefined;
 }
@@ -321,7 +364,8 @@ export interface Limit {
   readonly measured: Measured;
   readonly kind: 'max' | 'min';
   /** SI (mole fraction for a strength). */ readonly value: number;
-  readonly averaging: { readonly kind: 'none' } | { readonly kind: 'rolling' | 'block'; /** s */ readonly window: number };
+  readonly averaging:
+    { readonly kind: 'none' } | { readonly kind: 'rolling' | 'block'; /** s */ readonly window: number };
   /** Reference state of a strength limit. */ readonly basis: 'wet' | 'dry';
   /** Unit as typed, for people. */ readonly unit: string;
 }
@@ -331,16 +375,24 @@ export type Channel =
   | { readonly name: 'gas.composition' | 'liquid.composition' | 'makeUp.composition'; readonly solute: number }
   | {
       readonly name:
-        | 'gas.rate' | 'gas.temperature' | 'gas.humidity' | 'liquid.temperature' | 'pump.speed' | 'makeUp.temperature'
+        | 'gas.rate'
+        | 'gas.temperature'
+        | 'gas.humidity'
+        | 'liquid.temperature'
+        | 'pump.speed'
+        | 'makeUp.temperature'
         | 'cooling' // availability, 0..1
         | 'coolant.temperature'
         | 'packing.fouling' // share of the voids lost, 0..1
         | 'packing.foaming' // capacity factor, 0..1; multiplies the flooding velocity
-        | 'distribution.liquidShare' | 'ambient.temperature' | 'topPressure'
+        | 'distribution.liquidShare'
+        | 'ambient.temperature'
+        | 'topPressure'
         | 'nonReturnValve.leak'; // share of the delivery lost through the idle pump, 0..1
     };
 
-export type ValveName = 'gas-inlet' | 'diversion' | 'solvent' | 'drain' | 'make-up' | 'bleed' | 'emergency-water' | 'gas-damper';
+export type ValveName =
+  'gas-inlet' | 'diversion' | 'solvent' | 'drain' | 'make-up' | 'bleed' | 'emergency-water' | 'gas-damper';
 
 export type Action =
   | {
@@ -348,13 +400,38 @@ export type Action =
       readonly channel: Channel;
       /** `to`: absolute, SI; `times`: factor on the value that the case gives; `trace`: sampled. */
       readonly how:
-        | { readonly kind: 'to' | 'times'; readonly value: number; /** Ramp time, s. */ readonly over: number; /** Back to the case's value after this, s from the start; undefined: stays. */ readonly duration: number | undefined }
-        | { readonly kind: 'trace'; /** s from the start, ascending. */ readonly time: readonly number[]; readonly value: readonly number[] };
+        | {
+            readonly kind: 'to' | 'times';
+            readonly value: number;
+            /** Ramp time, s. */ readonly over: number;
+            /** Back to the case's value after this, s from the start; undefined: stays. */ readonly duration:
+              number | undefined;
+          }
+        | {
+            readonly kind: 'trace';
+            /** s from the start, ascending. */ readonly time: readonly number[];
+            readonly value: readonly number[];
+          };
     }
   | { readonly kind: 'machine'; readonly tag: string; readonly command: 'start' | 'stop' | 'lock-out' | 'release' }
-  | { readonly kind: 'valve'; readonly valve: ValveName; /** 0..1, or stuck where it is, or free again. */ readonly command: number | 'stick' | 'release' }
-  | { readonly kind: 'controller'; readonly tag: string; readonly mode: 'automatic' | 'manual' | undefined; readonly setpoint: number | undefined; readonly output: number | undefined }
-  | { readonly kind: 'instrument'; readonly tag: string; readonly fault: 'freeze' | 'fail-high' | 'fail-low' | 'restore' | { readonly bias: number } | { readonly drift: number } }
+  | {
+      readonly kind: 'valve';
+      readonly valve: ValveName;
+      /** 0..1, or stuck where it is, or free again. */ readonly command: number | 'stick' | 'release';
+    }
+  | {
+      readonly kind: 'controller';
+      readonly tag: string;
+      readonly mode: 'automatic' | 'manual' | undefined;
+      readonly setpoint: number | undefined;
+      readonly output: number | undefined;
+    }
+  | {
+      readonly kind: 'instrument';
+      readonly tag: string;
+      readonly fault:
+        'freeze' | 'fail-high' | 'fail-low' | 'restore' | { readonly bias: number } | { readonly drift: number };
+    }
   | { readonly kind: 'interlock'; readonly tag: string; readonly command: 'reset' | 'bypass' | 'restore' }
   /** Several machines lose power together and come back (or not) after `duration`. */
   | { readonly kind: 'power-dip'; readonly tags: readonly string[]; readonly duration: number | undefined };
@@ -364,7 +441,11 @@ export interface Step {
   readonly label: string;
   readonly trigger:
     | { readonly kind: 'time'; /** s */ readonly at: number }
-    | { readonly kind: 'condition'; readonly condition: Condition; /** Step that must have fired before, or undefined. */ readonly after: string | undefined }
+    | {
+        readonly kind: 'condition';
+        readonly condition: Condition;
+        /** Step that must have fired before, or undefined. */ readonly after: string | undefined;
+      }
     | { readonly kind: 'after'; readonly after: string; /** s */ readonly delay: number };
   readonly actions: readonly Action[];
   /** An upset starts trouble, an action answers it. */ readonly role: 'upset' | 'action';

@@ -4,7 +4,7 @@
 import * as v from 'valibot';
 
 import type { IssueKind } from './issues.ts';
-import { join, shorten } from './issues.ts';
+import { join } from './issues.ts';
 import { suggestion } from './nearest.ts';
 import type { Reading } from './reading.ts';
 import { NOUN } from './schema/primitives.ts';

@@ -66,12 +66,9 @@ export function issueSentence(issue: Issue): string {
 /** A value as an issue repeats it: JSON, cut after 60 characters. */
 export function shorten(value: unknown): string {
   if (value === undefined) return 'nothing';
-  let text: string;
-  if (typeof value === 'object' && value !== null && JSON.stringify(value).length > RECEIVED_LENGTH) {
-    text = Array.isArray(value) ? `a list of ${value.length}` : `an object with ${keysOf(value)}`;
-  } else {
-    text = JSON.stringify(value) ?? String(value);
-  }
+  const json = JSON.stringify(value) ?? typeof value;
+  const long = json.length > RECEIVED_LENGTH && typeof value === 'object' && value !== null;
+  const text = !long ? json : Array.isArray(value) ? `a list of ${value.length}` : `an object with ${keysOf(value)}`;
   return text.length > RECEIVED_LENGTH ? `${text.slice(0, RECEIVED_LENGTH - 1)}…` : text;
 }
 

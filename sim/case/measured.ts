@@ -2,7 +2,14 @@
 // strengths that need a molar mass (mg/Nm3, ppmw, mg/L).
 
 import type { Kind } from '../units.ts';
-import { NORMAL_MOLAR_VOLUME, formatNumber, formatQuantity, kindsWithUnit, splitQuantity, unitEntry } from '../units.ts';
+import {
+  NORMAL_MOLAR_VOLUME,
+  formatNumber,
+  formatQuantity,
+  kindsWithUnit,
+  splitQuantity,
+  unitEntry,
+} from '../units.ts';
 import type { Measured } from './case.ts';
 import type { Reading } from './reading.ts';
 
@@ -107,7 +114,9 @@ export function readStrength(
 ): number | undefined {
   const { number, unit } = splitQuantity(text);
   const expected = gas ? 'a gas strength' : 'a liquid strength';
-  const write = gas ? 'write for example "400 ppmv" or "350 mg/Nm3"' : 'write for example "0.02 mol%", "50 ppmw" or "10 ug/L"';
+  const write = gas
+    ? 'write for example "400 ppmv" or "350 mg/Nm3"'
+    : 'write for example "0.02 mol%", "50 ppmw" or "10 ug/L"';
   if (!Number.isFinite(number)) {
     reading.refuse('number', path, expected, text, write);
     return undefined;
@@ -169,7 +178,13 @@ export function readMeasured(
   if (share !== null) {
     const percent = Number(share[1]);
     if (scale.range === undefined || share[1] === '' || !Number.isFinite(percent)) {
-      reading.refuse('contradiction', path, 'a share of the range of an instrument that has one', text, 'give the instrument a range, or a value with its unit');
+      reading.refuse(
+        'contradiction',
+        path,
+        'a share of the range of an instrument that has one',
+        text,
+        'give the instrument a range, or a value with its unit',
+      );
       return undefined;
     }
     const [low, high] = scale.range;
@@ -194,7 +209,8 @@ export function unitSize(unit: string, scale: MeasuredScale): number | undefined
   if (kind === 'gas-strength' || kind === 'liquid-strength') {
     return scale.basis === undefined ? undefined : strengthFactor(unit, kind === 'gas-strength', scale.basis);
   }
-  if (kind === 'temperature') return (unitEntry('temperature-difference', unit) ?? unitEntry('temperature', unit))?.factor;
+  if (kind === 'temperature')
+    return (unitEntry('temperature-difference', unit) ?? unitEntry('temperature', unit))?.factor;
   return unitEntry(kind, unit)?.factor;
 }
 

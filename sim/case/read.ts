@@ -131,7 +131,13 @@ function readSections(reading: Reading, root: Record<string, unknown>): Case | u
   );
   solutes?.forEach((solute, index) => {
     if (solute !== undefined && solutes.findIndex((other) => other?.id === solute.id) < index) {
-      reading.refuse('duplicate', `solutes[${index}]`, 'a solute that is not listed before', solute.id, 'give it its own "id"');
+      reading.refuse(
+        'duplicate',
+        `solutes[${index}]`,
+        'a solute that is not listed before',
+        solute.id,
+        'give it its own "id"',
+      );
     }
   });
   const whole = solutes?.filter((solute) => solute !== undefined);
@@ -142,7 +148,8 @@ function readSections(reading: Reading, root: Record<string, unknown>): Case | u
 
   const column = columnText === undefined ? undefined : readColumn(reading, columnText, liquidText?.feed.rate);
   const pressure = column?.topPressure ?? Number.NaN;
-  const gas = gasText === undefined || substances === undefined ? undefined : readGas(reading, gasText, substances, pressure);
+  const gas =
+    gasText === undefined || substances === undefined ? undefined : readGas(reading, gasText, substances, pressure);
   const liquid =
     liquidText === undefined || substances === undefined || columnText === undefined
       ? undefined
@@ -193,15 +200,30 @@ type Watch = Pick<Case, 'instruments' | 'alarms' | 'interlocks' | 'controllers' 
 function readWatch(reading: Reading, root: Record<string, unknown>, plant: Plant | undefined): Watch | undefined {
   const { instruments, alarms, interlocks, controllers, limits, scenarios } = caseSchema.entries;
   const texts = {
-    instruments: entriesOf(reading, 'instruments', root['instruments'], (value, path) => checkSection(reading, instruments.wrapped.value, value, path)),
-    alarms: entriesOf(reading, 'alarms', root['alarms'], (value, path) => checkSection(reading, alarms.wrapped.value, value, path)),
-    interlocks: entriesOf(reading, 'interlocks', root['interlocks'], (value, path) => checkSection(reading, interlocks.wrapped.value, value, path)),
-    controllers: entriesOf(reading, 'controllers', root['controllers'], (value, path) => checkSection(reading, controllers.wrapped.value, value, path)),
-    limits: entriesOf(reading, 'limits', root['limits'], (value, path) => checkSection(reading, limits.wrapped.value, value, path)),
-    scenarios: entriesOf(reading, 'scenarios', root['scenarios'], (value, path) => checkSection(reading, scenarios.wrapped.value, value, path)),
+    instruments: entriesOf(reading, 'instruments', root['instruments'], (value, path) =>
+      checkSection(reading, instruments.wrapped.value, value, path),
+    ),
+    alarms: entriesOf(reading, 'alarms', root['alarms'], (value, path) =>
+      checkSection(reading, alarms.wrapped.value, value, path),
+    ),
+    interlocks: entriesOf(reading, 'interlocks', root['interlocks'], (value, path) =>
+      checkSection(reading, interlocks.wrapped.value, value, path),
+    ),
+    controllers: entriesOf(reading, 'controllers', root['controllers'], (value, path) =>
+      checkSection(reading, controllers.wrapped.value, value, path),
+    ),
+    limits: entriesOf(reading, 'limits', root['limits'], (value, path) =>
+      checkSection(reading, limits.wrapped.value, value, path),
+    ),
+    scenarios: entriesOf(reading, 'scenarios', root['scenarios'], (value, path) =>
+      checkSection(reading, scenarios.wrapped.value, value, path),
+    ),
   };
   const instrumentTags = keysOf(root['instruments']);
-  for (const [name, list] of [['alarms', texts.alarms], ['controllers', texts.controllers]] as const) {
+  for (const [name, list] of [
+    ['alarms', texts.alarms],
+    ['controllers', texts.controllers],
+  ] as const) {
     for (const [tag, entry] of list) {
       knownTag(reading, `${name}.${tag}.instrument`, 'the tag of an instrument', entry.instrument, instrumentTags);
     }
@@ -221,14 +243,20 @@ function readWatch(reading: Reading, root: Record<string, unknown>, plant: Plant
     interlockTags: keysOf(root['interlocks']),
   };
   checkTags(reading, tagUses(plant, root));
-  const readAlarms: Alarm[] = read(texts.alarms, (tag, text) => readAlarm(reading, join('alarms', tag), tag, text, scaled));
+  const readAlarms: Alarm[] = read(texts.alarms, (tag, text) =>
+    readAlarm(reading, join('alarms', tag), tag, text, scaled),
+  );
   warnCrossedAlarms(reading, readAlarms);
   const readControllers: Controller[] = read(texts.controllers, (tag, text) =>
     readController(reading, join('controllers', tag), tag, text, scaled, plant),
   );
-  const readInterlocks: Interlock[] = read(texts.interlocks, (tag, text) => readInterlock(reading, join('interlocks', tag), tag, text, directory));
+  const readInterlocks: Interlock[] = read(texts.interlocks, (tag, text) =>
+    readInterlock(reading, join('interlocks', tag), tag, text, directory),
+  );
   const readLimits: Limit[] = read(texts.limits, (id, text) => readLimit(reading, join('limits', id), id, text, plant));
-  const readScenarios: Scenario[] = read(texts.scenarios, (id, text) => readScenario(reading, join('scenarios', id), id, text, directory));
+  const readScenarios: Scenario[] = read(texts.scenarios, (id, text) =>
+    readScenario(reading, join('scenarios', id), id, text, directory),
+  );
   return {
     instruments: [...scaled.values()].map(({ instrument }) => instrument),
     alarms: readAlarms,

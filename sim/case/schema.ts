@@ -5,13 +5,7 @@ import * as v from 'valibot';
 
 import { runSchema, scenarioSchema, uncertainSchema } from './schema/actions.ts';
 import { columnSchema } from './schema/column.ts';
-import {
-  alarmSchema,
-  controllerSchema,
-  instrumentSchema,
-  interlockSchema,
-  limitSchema,
-} from './schema/control.ts';
+import { alarmSchema, controllerSchema, instrumentSchema, interlockSchema, limitSchema } from './schema/control.ts';
 import { gasSchema, liquidSchema } from './schema/plant.ts';
 import { group, maybe, text } from './schema/primitives.ts';
 import { carrierSchema, soluteSchema, solventSchema } from './schema/substances.ts';

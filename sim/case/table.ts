@@ -3,12 +3,9 @@
 
 import Papa from 'papaparse';
 
-import type { Kind } from '../units.ts';
 import { parseQuantity, unitEntry } from '../units.ts';
-import type { Equilibrium } from './case.ts';
 import type { Reading } from './reading.ts';
 import { suggestion } from './nearest.ts';
-import { checkTable } from './resolve/equilibrium.ts';
 
 /** A column's name and unit, from `acetone [ppmv]` or `acetone (ppmv)`. */
 export interface TableColumn {
@@ -35,10 +32,18 @@ const DELIMITERS: readonly string[] = ['\t', ';', ','];
  * @returns undefined after noting the issue.
  */
 export function parseTable(reading: Reading, path: string, name: string, text: string): Table | undefined {
-  const head = text.split(/\r?\n/).slice(0, 20).filter((line) => line.trim() !== '');
+  const head = text
+    .split(/\r?\n/)
+    .slice(0, 20)
+    .filter((line) => line.trim() !== '');
   const delimiter = DELIMITERS.find((sign) => head.length > 0 && head.every((line) => line.includes(sign)));
   if (delimiter === undefined) {
-    reading.object('trace', path, 'a table with columns set apart by tab, semicolon or comma', `"${name}" without such columns`);
+    reading.object(
+      'trace',
+      path,
+      'a table with columns set apart by tab, semicolon or comma',
+      `"${name}" without such columns`,
+    );
     return undefined;
   }
   const result = Papa.parse<string[]>(text.replace(/^\uFEFF/, ''), { delimiter, skipEmptyLines: false });
@@ -82,7 +87,9 @@ export function readTrace(
   const text = fileText(reading, path, name);
   const table = text === undefined ? undefined : parseTable(reading, path, name, text);
   if (table === undefined) return undefined;
-  const timeIndex = table.columns.findIndex(({ name: title, unit }) => /^(time|t)$/i.test(title) || /^(s|min|h|d|h:mm:ss)$/.test(unit));
+  const timeIndex = table.columns.findIndex(
+    ({ name: title, unit }) => /^(time|t)$/i.test(title) || /^(s|min|h|d|h:mm:ss)$/.test(unit),
+  );
   if (timeIndex < 0) {
     reading.object('trace', path, 'a column "time [s]" (or min, h, h:mm:ss)', `"${name}" without one`);
     return undefined;
@@ -122,50 +129,8 @@ export function readTrace(
   return { time, value };
 }
 
-/** Reads an equilibrium table of long form: temperature, liquid mole fraction, partial pressure. */
-export function readEquilibriumFile(reading: Reading, path: string, name: string): Equilibrium | undefined {
-  const text = fileText(reading, path, name);
-  const table = text === undefined ? undefined : parseTable(reading, path, name, text);
-  if (table === undefined) return undefined;
-  const find = (kind: Kind): number => table.columns.findIndex(({ unit }) => unit !== '' && unitEntry(kind, unit) !== undefined);
-  const index = { T: find('temperature'), x: find('mole-fraction'), p: find('pressure-difference') };
-  if (index.T < 0 || index.x < 0 || index.p < 0) {
-    const titles = table.columns.map(({ name: title, unit }) => `${title} [${unit}]`).join(', ');
-    reading.object('trace', path, 'columns such as "temperature [degC]", "x [mol/mol]", "p [Pa]"', titles);
-    return undefined;
-  }
-  const faults = new RowFaults(reading, path, name);
-  const cell = (kind: Kind, at: number, cells: readonly string[]): number | undefined => {
-    const number = numberOf(cells[at] ?? '', table.decimalComma);
-    const parsed = number === undefined ? undefined : parseQuantity(`${number} ${table.columns[at]?.unit ?? ''}`, kind);
-    return parsed?.ok === true ? parsed.value : undefined;
-  };
-  const points = new Map<number, Map<number, number>>();
-  for (const { line, cells } of table.rows) {
-    const T = cell('temperature', index.T, cells);
-    const x = cell('mole-fraction', index.x, cells);
-    const p = cell('pressure-difference', index.p, cells);
-    if (T === undefined || x === undefined || p === undefined) {
-      faults.note(line, 'three numbers', cells.join(' | '));
-      continue;
-    }
-    const row = points.get(T) ?? new Map<number, number>();
-    if (row.has(x)) faults.note(line, 'each temperature and strength once', cells.join(' | '));
-    points.set(T, row.set(x, p));
-  }
-  if (faults.finish()) return undefined;
-  const temperature = [...points.keys()].sort((a, b) => a - b);
-  const moleFraction = [...new Set([...points.values()].flatMap((row) => [...row.keys()]))].sort((a, b) => a - b);
-  const pressure = temperature.map((T) => moleFraction.map((x) => points.get(T)?.get(x) ?? Number.NaN));
-  if (pressure.some((row) => row.some(Number.isNaN))) {
-    reading.object('trace', path, 'a pressure for each temperature at each strength', `gaps in "${name}"`);
-    return undefined;
-  }
-  return checkTable(reading, path, temperature, moleFraction, pressure);
-}
-
 /** Text of a named file, or undefined after noting that there is none. */
-function fileText(reading: Reading, path: string, name: string): string | undefined {
+export function fileText(reading: Reading, path: string, name: string): string | undefined {
   const text = reading.resolveFile?.(name);
   if (text === undefined) {
     reading.refuse('reference', path, 'a file that can be read', name, 'paths are relative to the case file');
@@ -173,7 +138,8 @@ function fileText(reading: Reading, path: string, name: string): string | undefi
   return text;
 }
 
-function numberOf(cell: string, decimalComma: boolean): number | undefined {
+/** The number of a cell; undefined for anything else. */
+export function numberOf(cell: string, decimalComma: boolean): number | undefined {
   const text = decimalComma ? cell.replace(',', '.') : cell;
   if (!/^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/.test(text)) return undefined;
   const number = Number(text);
@@ -191,7 +157,7 @@ function timeOf(cell: string, unit: string, decimalComma: boolean): number | und
 }
 
 /** Bad rows of one file: the first few one by one, the rest as a count. */
-class RowFaults {
+export class RowFaults {
   #count = 0;
   readonly #reading: Reading;
   readonly #path: string;

@@ -48,5 +48,4 @@ export const NORMAL_MOLAR_VOLUME = (GAS_CONSTANT * CELSIUS_ZERO) / ATMOSPHERE;
  * m3/mol of ideal gas at 60 degF and 14.696 psi, the reference of scf taken here: common practice of
  * the US gas trade, no source; other references differ by up to 3 % and are not accepted as scf.
  */
-export const STANDARD_MOLAR_VOLUME =
-  (GAS_CONSTANT * (60 + FAHRENHEIT_ZERO) * RANKINE) / (14.696 * PSI);
+export const STANDARD_MOLAR_VOLUME = (GAS_CONSTANT * (60 + FAHRENHEIT_ZERO) * RANKINE) / (14.696 * PSI);

@@ -251,25 +251,9 @@ export const KINDS = {
     u('uPa s', 1e-6),
     u('lb/(ft s)', POUND / FOOT),
   ),
-  'surface-tension': kind(
-    'a surface tension',
-    '72 mN/m',
-    u('N/m', 1),
-    u('mN/m', 1e-3, 'dyn/cm'),
-  ),
-  diffusivity: kind(
-    'a diffusivity',
-    '1.2e-9 m2/s',
-    u('m2/s', 1),
-    u('cm2/s', 1e-4),
-    u('ft2/h', FOOT ** 2 / HOUR),
-  ),
-  'molar-mass': kind(
-    'a molar mass',
-    '58.08 g/mol',
-    u('kg/mol', 1),
-    u('g/mol', 1e-3, 'kg/kmol', 'lb/lbmol'),
-  ),
+  'surface-tension': kind('a surface tension', '72 mN/m', u('N/m', 1), u('mN/m', 1e-3, 'dyn/cm')),
+  diffusivity: kind('a diffusivity', '1.2e-9 m2/s', u('m2/s', 1), u('cm2/s', 1e-4), u('ft2/h', FOOT ** 2 / HOUR)),
+  'molar-mass': kind('a molar mass', '58.08 g/mol', u('kg/mol', 1), u('g/mol', 1e-3, 'kg/kmol', 'lb/lbmol')),
   'molar-volume': kind(
     'a molar volume',
     '74 cm3/mol',
@@ -316,12 +300,7 @@ export const KINDS = {
     u('kW/(m2 K)', 1e3),
     u('Btu/(h ft2 degF)', BTU / HOUR / FOOT ** 2 / RANKINE),
   ),
-  'packing-area': kind(
-    'a packing area per volume',
-    '139 m2/m3',
-    u('m2/m3', 1, '1/m'),
-    u('ft2/ft3', 1 / FOOT, '1/ft'),
-  ),
+  'packing-area': kind('a packing area per volume', '139 m2/m3', u('m2/m3', 1, '1/m'), u('ft2/ft3', 1 / FOOT, '1/ft')),
   'packing-factor': kind('a packing factor', '92 1/m', u('1/m', 1), u('1/ft', 1 / FOOT)),
   'henry-solubility': kind(
     "a Henry solubility (amount in the liquid's volume per partial pressure)",

@@ -33,14 +33,20 @@ export function knownTag(reading: Reading, path: string, what: string, tag: stri
 }
 
 /** A condition, or undefined after noting why not. */
-export function readCondition(reading: Reading, path: string, given: ConditionText, directory: Directory): Condition | undefined {
+export function readCondition(
+  reading: Reading,
+  path: string,
+  given: ConditionText,
+  directory: Directory,
+): Condition | undefined {
   const { instrument, above, below } = given;
   const text = above ?? below;
   if (text === undefined || (above !== undefined && below !== undefined)) {
     reading.object('contradiction', path, 'either "above" or "below"', text === undefined ? 'neither' : 'both');
     return undefined;
   }
-  if (!knownTag(reading, join(path, 'instrument'), 'the tag of an instrument', instrument, directory.instrumentTags)) return undefined;
+  if (!knownTag(reading, join(path, 'instrument'), 'the tag of an instrument', instrument, directory.instrumentTags))
+    return undefined;
   const scaled = directory.instruments.get(instrument);
   if (scaled === undefined) return undefined;
   const kind = above === undefined ? 'below' : 'above';
@@ -49,7 +55,12 @@ export function readCondition(reading: Reading, path: string, given: ConditionTe
 }
 
 /** The actions of one entry (several for "set"), or undefined after noting why not. */
-export function readAction(reading: Reading, path: string, given: ActionText, directory: Directory): readonly Action[] | undefined {
+export function readAction(
+  reading: Reading,
+  path: string,
+  given: ActionText,
+  directory: Directory,
+): readonly Action[] | undefined {
   const verb = verbOf(reading, path, given);
   if (verb === undefined) return undefined;
   if (verb === 'change') return one(readChange(reading, path, given, directory));
@@ -101,7 +112,12 @@ function readChange(reading: Reading, path: string, given: ActionText, directory
   const use = findChannel(reading, join(path, 'change'), given.change ?? '', directory.plant);
   const ways = (['to', 'by', 'times', 'trace'] as const).filter((key) => given[key] !== undefined);
   if (ways.length !== 1) {
-    reading.object('contradiction', path, 'exactly one of "to", "by", "times", "trace"', ways.length === 0 ? 'none' : ways.join(', '));
+    reading.object(
+      'contradiction',
+      path,
+      'exactly one of "to", "by", "times", "trace"',
+      ways.length === 0 ? 'none' : ways.join(', '),
+    );
     return undefined;
   }
   if (use === undefined) return undefined;
@@ -110,18 +126,29 @@ function readChange(reading: Reading, path: string, given: ActionText, directory
   if (given.for !== undefined && given.over !== undefined && given.over > given.for) {
     reading.object('contradiction', join(path, 'over'), 'a ramp that ends before the change does', 'a longer one');
   }
-  const change = (kind: 'to' | 'times', value: number): Action => ({ kind: 'change', channel: use.channel, how: { kind, value, ...timing } });
+  const change = (kind: 'to' | 'times', value: number): Action => ({
+    kind: 'change',
+    channel: use.channel,
+    how: { kind, value, ...timing },
+  });
   if (given.times !== undefined) {
     const where = join(path, 'times');
     if (!use.canMultiply) {
-      reading.refuse('contradiction', where, 'no factor on a quantity with its own zero', given.times, 'use "to" or "by"');
+      reading.refuse(
+        'contradiction',
+        where,
+        'no factor on a quantity with its own zero',
+        given.times,
+        'use "to" or "by"',
+      );
       return undefined;
     }
     if (!use.allows(given.times * use.base)) {
       reading.refuse('range', where, 'a factor that leaves the value possible', given.times);
       return undefined;
     }
-    if (use.base === 0) reading.warn('style', where, 'a case value other than 0', '0', 'a factor on nothing changes nothing');
+    if (use.base === 0)
+      reading.warn('style', where, 'a case value other than 0', '0', 'a factor on nothing changes nothing');
     return change('times', given.times);
   }
   if (given.by !== undefined) {
@@ -139,27 +166,51 @@ function readChange(reading: Reading, path: string, given: ActionText, directory
 
 function readTraceChange(reading: Reading, path: string, given: ActionText, use: ChannelUse): Action | undefined {
   for (const key of ['over', 'for'] as const) {
-    if (given[key] !== undefined) reading.object('contradiction', join(path, key), 'no such key beside a trace', 'one', 'the trace has its own times');
+    if (given[key] !== undefined)
+      reading.object(
+        'contradiction',
+        join(path, key),
+        'no such key beside a trace',
+        'one',
+        'the trace has its own times',
+      );
   }
-  const trace = readTrace(reading, join(path, 'trace'), given.trace ?? '', given.column, (where, text) => use.read(where, text));
+  const trace = readTrace(reading, join(path, 'trace'), given.trace ?? '', given.column, (where, text) =>
+    use.read(where, text),
+  );
   return trace === undefined ? undefined : { kind: 'change', channel: use.channel, how: { kind: 'trace', ...trace } };
 }
 
-function readSet(reading: Reading, path: string, given: ActionText, directory: Directory): readonly Action[] | undefined {
+function readSet(
+  reading: Reading,
+  path: string,
+  given: ActionText,
+  directory: Directory,
+): readonly Action[] | undefined {
   const actions: Action[] = [];
   for (const [name, value] of Object.entries(given.set ?? {})) {
     const where = join(join(path, 'set'), name);
     const use = findChannel(reading, where, name, directory.plant);
     const si = use?.read(where, value);
     if (use === undefined || si === undefined) continue;
-    actions.push({ kind: 'change', channel: use.channel, how: { kind: 'to', value: si, over: given.over ?? 0, duration: given.for } });
+    actions.push({
+      kind: 'change',
+      channel: use.channel,
+      how: { kind: 'to', value: si, over: given.over ?? 0, duration: given.for },
+    });
   }
   return actions;
 }
 
 type MachineVerb = 'start' | 'stop' | 'lockOut' | 'release';
 
-function readMachine(reading: Reading, path: string, verb: MachineVerb, given: ActionText, directory: Directory): Action | undefined {
+function readMachine(
+  reading: Reading,
+  path: string,
+  verb: MachineVerb,
+  given: ActionText,
+  directory: Directory,
+): Action | undefined {
   const tag = given[verb] ?? '';
   if (!knownMachine(reading, join(path, verb), tag, directory)) return undefined;
   return { kind: 'machine', tag, command: verb === 'lockOut' ? 'lock-out' : verb };
@@ -181,7 +232,13 @@ function knownMachine(reading: Reading, path: string, tag: string, { plant }: Di
 
 type ValveVerb = 'open' | 'close' | 'valve' | 'stick' | 'free';
 
-function readValve(reading: Reading, path: string, verb: ValveVerb, given: ActionText, { plant }: Directory): Action | undefined {
+function readValve(
+  reading: Reading,
+  path: string,
+  verb: ValveVerb,
+  given: ActionText,
+  { plant }: Directory,
+): Action | undefined {
   const word = given[verb] ?? '';
   const valve = [...plant.valves].find(([name, tag]) => name === word || tag === word)?.[0];
   if (valve === undefined) {
@@ -193,7 +250,12 @@ function readValve(reading: Reading, path: string, verb: ValveVerb, given: Actio
   return command === undefined ? undefined : { kind: 'valve', valve: valve satisfies ValveName, command };
 }
 
-function valveCommand(reading: Reading, path: string, verb: ValveVerb, given: ActionText): number | 'stick' | 'release' | undefined {
+function valveCommand(
+  reading: Reading,
+  path: string,
+  verb: ValveVerb,
+  given: ActionText,
+): number | 'stick' | 'release' | undefined {
   if (verb === 'open') return 1;
   if (verb === 'close') return 0;
   if (verb === 'stick') return 'stick';
@@ -209,15 +271,24 @@ function valveCommand(reading: Reading, path: string, verb: ValveVerb, given: Ac
   return undefined;
 }
 
-function readControllerAction(reading: Reading, path: string, given: ActionText, directory: Directory): Action | undefined {
+function readControllerAction(
+  reading: Reading,
+  path: string,
+  given: ActionText,
+  directory: Directory,
+): Action | undefined {
   const tag = given.controller ?? '';
-  if (!knownTag(reading, join(path, 'controller'), 'the tag of a controller', tag, directory.controllerTags)) return undefined;
+  if (!knownTag(reading, join(path, 'controller'), 'the tag of a controller', tag, directory.controllerTags))
+    return undefined;
   if (given.mode === undefined && given.setpoint === undefined && given.output === undefined) {
     reading.object('missing', path, 'a mode, a setpoint or an output', 'none');
     return undefined;
   }
   const scaled = directory.instruments.get(directory.controllerInstruments.get(tag) ?? '');
-  const setpoint = given.setpoint === undefined || scaled === undefined ? undefined : readSetpoint(reading, join(path, 'setpoint'), given.setpoint, scaled.scale);
+  const setpoint =
+    given.setpoint === undefined || scaled === undefined
+      ? undefined
+      : readSetpoint(reading, join(path, 'setpoint'), given.setpoint, scaled.scale);
   return { kind: 'controller', tag, mode: given.mode, setpoint, output: given.output };
 }
 
@@ -228,7 +299,8 @@ function readFault(reading: Reading, path: string, given: ActionText, directory:
     reading.object('missing', join(path, 'instrument'), 'the tag of an instrument', 'nothing');
     return undefined;
   }
-  if (!knownTag(reading, join(path, 'instrument'), 'the tag of an instrument', tag, directory.instrumentTags)) return undefined;
+  if (!knownTag(reading, join(path, 'instrument'), 'the tag of an instrument', tag, directory.instrumentTags))
+    return undefined;
   const scaled = directory.instruments.get(tag);
   if (fault !== 'bias' && fault !== 'drift') return { kind: 'instrument', tag, fault };
   const key = fault === 'bias' ? 'by' : 'perTime';
@@ -246,7 +318,12 @@ function readFault(reading: Reading, path: string, given: ActionText, directory:
   return { kind: 'instrument', tag, fault: fault === 'bias' ? { bias: value } : { drift: value } };
 }
 
-function readInterlockAction(reading: Reading, path: string, given: ActionText, directory: Directory): Action | undefined {
+function readInterlockAction(
+  reading: Reading,
+  path: string,
+  given: ActionText,
+  directory: Directory,
+): Action | undefined {
   const tag = given.interlock ?? '';
   const known = knownTag(reading, join(path, 'interlock'), 'the tag of an interlock', tag, directory.interlockTags);
   if (given.command === undefined) {
@@ -258,6 +335,8 @@ function readInterlockAction(reading: Reading, path: string, given: ActionText, 
 
 function readPowerDip(reading: Reading, path: string, given: ActionText, directory: Directory): Action | undefined {
   const tags = given.powerDip ?? [];
-  const known = tags.filter((tag, index) => knownMachine(reading, `${join(path, 'powerDip')}[${index}]`, tag, directory));
+  const known = tags.filter((tag, index) =>
+    knownMachine(reading, `${join(path, 'powerDip')}[${index}]`, tag, directory),
+  );
   return known.length < tags.length ? undefined : { kind: 'power-dip', tags, duration: given.for };
 }

@@ -27,10 +27,20 @@ const PLAIN: Readonly<Record<PlainName, PlainChannel>> = {
   'pump.speed': { kind: 'fraction', min: 0, max: 1.5, base: () => 1 },
   'makeUp.temperature': { kind: 'temperature', min: 200, max: 500, base: ({ liquid }) => liquid.makeUp?.temperature },
   cooling: { kind: 'fraction', min: 0, max: 1, base: ({ liquid }) => (liquid.cooler === undefined ? undefined : 1) },
-  'coolant.temperature': { kind: 'temperature', min: 200, max: 500, base: ({ liquid }) => liquid.cooler?.coolantTemperature },
+  'coolant.temperature': {
+    kind: 'temperature',
+    min: 200,
+    max: 500,
+    base: ({ liquid }) => liquid.cooler?.coolantTemperature,
+  },
   'packing.fouling': { kind: 'fraction', min: 0, max: 0.9, base: () => 0 },
   'packing.foaming': { kind: 'fraction', min: 0.05, max: 1, base: () => 1 },
-  'distribution.liquidShare': { kind: 'fraction', min: 0, max: 1, base: ({ column }) => column.distribution?.liquidShare },
+  'distribution.liquidShare': {
+    kind: 'fraction',
+    min: 0,
+    max: 1,
+    base: ({ column }) => column.distribution?.liquidShare,
+  },
   'ambient.temperature': { kind: 'temperature', min: 200, max: 350, base: ({ column }) => column.ambientTemperature },
   topPressure: { kind: 'absolute-pressure', min: 1e3, max: 1e7, base: ({ column }) => column.topPressure },
   'nonReturnValve.leak': { kind: 'fraction', min: 0, max: 1, base: () => 0 },
@@ -58,9 +68,19 @@ export interface ChannelUse {
 export function findChannel(reading: Reading, path: string, name: string, plant: Plant): ChannelUse | undefined {
   if (Object.hasOwn(PLAIN, name)) return plainChannel(reading, path, name as PlainName, plant);
   const composition = COMPOSITIONS.find((start) => name === start || name.startsWith(`${start}.`));
-  if (composition !== undefined) return compositionChannel(reading, path, composition, name.slice(composition.length + 1), plant);
-  const known = [...Object.keys(PLAIN), ...COMPOSITIONS.flatMap((start) => plant.solutes.map(({ id }) => `${start}.${id}`))];
-  reading.refuse('reference', path, 'a quantity that can change', name, suggestion(name, known) ?? `known: ${known.join(', ')}`);
+  if (composition !== undefined)
+    return compositionChannel(reading, path, composition, name.slice(composition.length + 1), plant);
+  const known = [
+    ...Object.keys(PLAIN),
+    ...COMPOSITIONS.flatMap((start) => plant.solutes.map(({ id }) => `${start}.${id}`)),
+  ];
+  reading.refuse(
+    'reference',
+    path,
+    'a quantity that can change',
+    name,
+    suggestion(name, known) ?? `known: ${known.join(', ')}`,
+  );
   return undefined;
 }
 
@@ -74,7 +94,13 @@ function plainChannel(reading: Reading, path: string, name: PlainName, plant: Pl
   const own = (text: string | number, as: Kind, where: string): number | undefined => {
     if (typeof text === 'number') {
       if (as === 'fraction') return text;
-      reading.refuse('type', where, KINDS[as].noun, text, `a quantity is text with its unit; write for example "${KINDS[as].example}"`);
+      reading.refuse(
+        'type',
+        where,
+        KINDS[as].noun,
+        text,
+        `a quantity is text with its unit; write for example "${KINDS[as].example}"`,
+      );
       return undefined;
     }
     return reading.quantity(where, text, as);
@@ -86,7 +112,8 @@ function plainChannel(reading: Reading, path: string, name: PlainName, plant: Pl
     allows: (v) => v >= min && v <= max,
     read: (where, text) => inRange(reading, where, text, own(text, kind, where), min, max),
     readDifference: (where, text) => {
-      const of = kind === 'temperature' ? 'temperature-difference' : kind === 'absolute-pressure' ? 'pressure-difference' : kind;
+      const of =
+        kind === 'temperature' ? 'temperature-difference' : kind === 'absolute-pressure' ? 'pressure-difference' : kind;
       return own(text, of, where);
     },
   };
@@ -108,7 +135,8 @@ function compositionChannel(
   const gas = name === 'gas.composition';
   const stream = gas ? plant.gas.feed : name === 'liquid.composition' ? plant.liquid.feed : plant.liquid.makeUp;
   const basis = basisOf(plant, solute, plant.liquidTemperature);
-  const read = (where: string, text: string | number): number | undefined => readStrength(reading, where, String(text), gas, basis);
+  const read = (where: string, text: string | number): number | undefined =>
+    readStrength(reading, where, String(text), gas, basis);
   return {
     channel: { name, solute },
     base: stream?.composition[solute] ?? 0,

@@ -8,10 +8,14 @@ import { COLUMN } from '../defaults.ts';
 import { join } from '../issues.ts';
 import type { Default, Reading } from '../reading.ts';
 import type { ColumnText, PackingText, TransferText } from '../schema/column.ts';
-import { origin } from './substances.ts';
+import { origin } from './origin.ts';
 
 /** The column, or undefined after noting why not. `liquidRate`: design, m3/s. */
-export function readColumn(reading: Reading, given: ColumnText, liquidRate: number | undefined): ColumnSpec | undefined {
+export function readColumn(
+  reading: Reading,
+  given: ColumnText,
+  liquidRate: number | undefined,
+): ColumnSpec | undefined {
   const path = 'column';
   const key = (name: string): string => join(path, name);
   const beds = given.beds.map((bed, index): Bed | undefined => {
@@ -21,7 +25,10 @@ export function readColumn(reading: Reading, given: ColumnText, liquidRate: numb
       ...COLUMN.redistributorSeconds,
       value: COLUMN.redistributorSeconds.value * (liquidRate ?? 0),
     };
-    const redistributorVolume = index === 0 && bed.redistributorVolume === undefined ? 0 : reading.fill(join(at, 'redistributorVolume'), bed.redistributorVolume, held);
+    const redistributorVolume =
+      index === 0 && bed.redistributorVolume === undefined
+        ? 0
+        : reading.fill(join(at, 'redistributorVolume'), bed.redistributorVolume, held);
     const segments = reading.fill(join(at, 'segments'), bed.segments, COLUMN.segments);
     return packing === undefined ? undefined : { packing, height: bed.height, segments, redistributorVolume };
   });
@@ -93,7 +100,9 @@ type MeasuredText = Extract<TransferText, { model: 'measured' }>;
 
 function readMeasuredTransfer(reading: Reading, path: string, text: MeasuredText): Transfer | undefined {
   const { NOG, HOG, KGa, Kya, HG, HL } = text;
-  const stated = Object.entries({ NOG, HOG, KGa, Kya, 'HG and HL': HG ?? HL }).filter(([, value]) => value !== undefined);
+  const stated = Object.entries({ NOG, HOG, KGa, Kya, 'HG and HL': HG ?? HL }).filter(
+    ([, value]) => value !== undefined,
+  );
   if (stated.length !== 1) {
     const received = stated.length === 0 ? 'none' : stated.map(([name]) => name).join(', ');
     reading.object('contradiction', path, 'exactly one of NOG, HOG, KGa, Kya, or HG and HL', received);
@@ -126,13 +135,19 @@ export function readPacking(reading: Reading, path: string, given: PackingText):
   const own: Exclude<PackingText, string> = typeof given === 'string' ? { base: given } : given;
   const base = own.base === undefined ? undefined : PACKINGS[own.base];
   if (own.base !== undefined && base === undefined) {
-    reading.unknown(typeof given === 'string' ? path : join(path, 'base'), 'a library packing', own.base, Object.keys(PACKINGS));
+    reading.unknown(
+      typeof given === 'string' ? path : join(path, 'base'),
+      'a library packing',
+      own.base,
+      Object.keys(PACKINGS),
+    );
     return undefined;
   }
   const need = (name: string, value: number | undefined, entry: PackingEntry['a'] | undefined): number | undefined => {
     const where = join(path, name);
     if (entry !== undefined) return reading.fill(where, value, { value: entry.value, ...origin(entry) });
-    if (value === undefined) reading.object('missing', where, 'a value', 'nothing', 'without "base" this number is needed');
+    if (value === undefined)
+      reading.object('missing', where, 'a value', 'nothing', 'without "base" this number is needed');
     else reading.stated(where);
     return value;
   };
@@ -151,8 +166,20 @@ export function readPacking(reading: Reading, path: string, given: PackingText):
     return undefined;
   }
   const before = reading.issues.length;
-  const friction = constants(reading, join(path, 'friction'), ['C1', 'C2', 'C3'] as const, own.friction, base?.stichlmair);
-  const billet = constants(reading, join(path, 'billet'), ['CL', 'CV', 'Ch', 'Cp0', 'CS', 'CFl'] as const, own.billet, base?.billet);
+  const friction = constants(
+    reading,
+    join(path, 'friction'),
+    ['C1', 'C2', 'C3'] as const,
+    own.friction,
+    base?.stichlmair,
+  );
+  const billet = constants(
+    reading,
+    join(path, 'billet'),
+    ['CL', 'CV', 'Ch', 'Cp0', 'CS', 'CFl'] as const,
+    own.billet,
+    base?.billet,
+  );
   if (reading.issues.length > before) return undefined;
   return {
     id: own.id ?? base?.id ?? 'own-packing',
@@ -175,7 +202,13 @@ function constants<K extends string>(
   path: string,
   names: readonly K[],
   own: { readonly [N in K]?: number | undefined } | undefined,
-  listed: { readonly value: { readonly [N in K]?: number }; readonly source: string; readonly verified: 'seen' | 'from memory' | 'computed' | 'demo' } | undefined,
+  listed:
+    | {
+        readonly value: { readonly [N in K]?: number };
+        readonly source: string;
+        readonly verified: 'seen' | 'from memory' | 'computed' | 'demo';
+      }
+    | undefined,
 ): Record<K, number> | undefined {
   const out: Partial<Record<K, number>> = {};
   const missing: K[] = [];
@@ -237,11 +270,5 @@ function checkHeight(reading: Reading, given: ColumnText): void {
       `${packed} m of packing`,
       'lower the beds or raise shellHeight',
     );
-  }
-  if (given.distribution !== undefined && given.beds.length > 0) {
-    const { areaShare, liquidShare } = given.distribution;
-    if (liquidShare === areaShare) {
-      reading.warn('style', 'column.distribution', 'a liquid share other than the area share', 'equal shares', 'two equal zones are one zone');
-    }
   }
 }

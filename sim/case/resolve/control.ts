@@ -53,12 +53,17 @@ export function readInstrument(
         ? undefined
         : {
             sigma,
-            correlationTime: reading.fill(join(path, 'noise.correlationTime'), given.noise?.correlationTime, INSTRUMENT.correlationTime),
+            correlationTime: reading.fill(
+              join(path, 'noise.correlationTime'),
+              given.noise?.correlationTime,
+              INSTRUMENT.correlationTime,
+            ),
           },
     range,
     sampleInterval: given.sampleInterval,
   };
-  if (sigma !== undefined && sigma < 0) reading.refuse('range', join(path, 'noise.sigma'), 'a standard deviation of at least 0', given.noise?.sigma);
+  if (sigma !== undefined && sigma < 0)
+    reading.refuse('range', join(path, 'noise.sigma'), 'a standard deviation of at least 0', given.noise?.sigma);
   return reading.issues.length > before ? undefined : { instrument, scale };
 }
 
@@ -79,13 +84,20 @@ function readMeasures(
     const key = join(path, 'solute');
     if (solute === undefined) {
       if (plant.solutes.length === 1) return { quantity, solute: 0 };
-      reading.object('missing', key, 'which solute', 'nothing', `one of ${plant.solutes.map(({ id }) => id).join(', ')}`);
+      reading.object(
+        'missing',
+        key,
+        'which solute',
+        'nothing',
+        `one of ${plant.solutes.map(({ id }) => id).join(', ')}`,
+      );
       return undefined;
     }
     const index = soluteIndex(reading, key, plant, solute);
     return index === undefined ? undefined : { quantity, solute: index };
   }
-  if (solute !== undefined) reading.object('contradiction', join(path, 'solute'), `no solute with ${quantity}`, `"${solute}"`);
+  if (solute !== undefined)
+    reading.object('contradiction', join(path, 'solute'), `no solute with ${quantity}`, `"${solute}"`);
   if (quantity === 'make-up-flow' && !plant.valves.has('make-up')) {
     reading.object('contradiction', join(path, 'measures'), 'a plant with a make-up', 'a plant without one');
   }
@@ -144,7 +156,13 @@ export function readSetpoint(
     const [low, high] = scale.range;
     const slack = 1e-9 * (high - low);
     if (value < low - slack || value > high + slack) {
-      reading.warn('range', path, "a value within the instrument's range", `"${text}"`, 'the instrument can never show it');
+      reading.warn(
+        'range',
+        path,
+        "a value within the instrument's range",
+        `"${text}"`,
+        'the instrument can never show it',
+      );
     }
   }
   return value;
@@ -161,7 +179,13 @@ export function readAlarm(
   const scaled = instruments.get(given.instrument);
   const text = given.high ?? given.low;
   if (text === undefined || (given.high !== undefined && given.low !== undefined)) {
-    reading.object('contradiction', path, 'either "high" or "low" with the setpoint', text === undefined ? 'neither' : 'both', 'two setpoints are two alarms');
+    reading.object(
+      'contradiction',
+      path,
+      'either "high" or "low" with the setpoint',
+      text === undefined ? 'neither' : 'both',
+      'two setpoints are two alarms',
+    );
     return undefined;
   }
   if (scaled === undefined) return undefined;
@@ -169,10 +193,22 @@ export function readAlarm(
   const { scale } = scaled;
   const setpoint = readSetpoint(reading, join(path, kind), text, scale);
   const share = ALARM.deadband[signalOf(scale.quantity)];
-  const fallback = scale.range === undefined ? ALARM.noRangeDeadband : { ...share, value: share.value * (scale.range[1] - scale.range[0]) };
-  const own = given.deadband === undefined ? undefined : readSetpoint(reading, join(path, 'deadband'), given.deadband, scale, 'difference');
+  const fallback =
+    scale.range === undefined
+      ? ALARM.noRangeDeadband
+      : { ...share, value: share.value * (scale.range[1] - scale.range[0]) };
+  const own =
+    given.deadband === undefined
+      ? undefined
+      : readSetpoint(reading, join(path, 'deadband'), given.deadband, scale, 'difference');
   if (own !== undefined && own < 0) {
-    reading.refuse('range', join(path, 'deadband'), 'a deadband of at least 0', given.deadband, 'its size, without a sign');
+    reading.refuse(
+      'range',
+      join(path, 'deadband'),
+      'a deadband of at least 0',
+      given.deadband,
+      'its size, without a sign',
+    );
     return undefined;
   }
   if (setpoint === undefined) return undefined;
@@ -201,7 +237,11 @@ export function readController(
   if (!plant.outputs.has(given.output)) {
     reading.object('contradiction', join(path, 'output'), `a plant with a ${given.output}`, 'a plant without one');
   }
-  const outputRange = reading.fill<readonly [number, number]>(join(path, 'outputRange'), given.outputRange, CONTROL.outputRange);
+  const outputRange = reading.fill<readonly [number, number]>(
+    join(path, 'outputRange'),
+    given.outputRange,
+    CONTROL.outputRange,
+  );
   if (outputRange[0] >= outputRange[1]) {
     reading.refuse('contradiction', join(path, 'outputRange'), 'a lower and a higher output', given.outputRange);
   }
@@ -248,11 +288,23 @@ function readGain(reading: Reading, path: string, given: string | number, scale:
 }
 
 /** One limit, or undefined after noting why not. */
-export function readLimit(reading: Reading, path: string, id: string, given: LimitText, plant: Plant): Limit | undefined {
+export function readLimit(
+  reading: Reading,
+  path: string,
+  id: string,
+  given: LimitText,
+  plant: Plant,
+): Limit | undefined {
   const measured = readMeasures(reading, path, given.measures, given.solute, plant);
   const text = given.max ?? given.min;
   if (text === undefined || (given.max !== undefined && given.min !== undefined)) {
-    reading.object('contradiction', path, 'either "max" or "min"', text === undefined ? 'neither' : 'both', 'two limits are two entries');
+    reading.object(
+      'contradiction',
+      path,
+      'either "max" or "min"',
+      text === undefined ? 'neither' : 'both',
+      'two limits are two entries',
+    );
     return undefined;
   }
   if (measured === undefined) return undefined;
@@ -263,11 +315,22 @@ export function readLimit(reading: Reading, path: string, id: string, given: Lim
   const perNormal = unitEntry('normal-mass-concentration', unit) !== undefined;
   const gas = kindOfMeasured(given.measures) === 'gas-strength';
   if (gas && perNormal && given.basis === undefined) {
-    reading.object('missing', join(path, 'basis'), '"dry" or "wet" beside a mass per normal volume', 'nothing', 'permits mostly mean dry gas');
+    reading.object(
+      'missing',
+      join(path, 'basis'),
+      '"dry" or "wet" beside a mass per normal volume',
+      'nothing',
+      'permits mostly mean dry gas',
+    );
     return undefined;
   }
   if (!gas && given.basis !== undefined) {
-    reading.object('contradiction', join(path, 'basis'), 'no basis: the limit is not a gas strength', `"${given.basis}"`);
+    reading.object(
+      'contradiction',
+      join(path, 'basis'),
+      'no basis: the limit is not a gas strength',
+      `"${given.basis}"`,
+    );
   }
   if (value === undefined) return undefined;
   const averaging = given.averaging === 'none' ? ({ kind: 'none' } as const) : given.averaging;
@@ -286,9 +349,17 @@ export function readLimit(reading: Reading, path: string, id: string, given: Lim
 export function warnCrossedAlarms(reading: Reading, alarms: readonly Alarm[]): void {
   for (const low of alarms) {
     if (low.kind !== 'low') continue;
-    const high = alarms.find((alarm) => alarm.kind === 'high' && alarm.instrument === low.instrument && alarm.setpoint <= low.setpoint);
+    const high = alarms.find(
+      (alarm) => alarm.kind === 'high' && alarm.instrument === low.instrument && alarm.setpoint <= low.setpoint,
+    );
     if (high !== undefined) {
-      reading.warn('contradiction', `alarms.${low.tag}.low`, `a setpoint below that of ${high.tag}`, 'one at or above it', 'one of the two is always in alarm');
+      reading.warn(
+        'contradiction',
+        `alarms.${low.tag}.low`,
+        `a setpoint below that of ${high.tag}`,
+        'one at or above it',
+        'one of the two is always in alarm',
+      );
     }
   }
 }

@@ -19,12 +19,7 @@ export type CurveText =
 
 /** Properties by which the library names its functions. */
 export type CurveProperty =
-  | 'density'
-  | 'viscosity'
-  | 'surface-tension'
-  | 'molar-heat-capacity'
-  | 'vapour-pressure'
-  | 'conductivity';
+  'density' | 'viscosity' | 'surface-tension' | 'molar-heat-capacity' | 'vapour-pressure' | 'conductivity';
 
 /** The curve, or undefined after noting the issue. */
 export function readCurve(
@@ -54,7 +49,12 @@ export function readCurve(
     return undefined;
   }
   if (!isAscending(temperature)) {
-    reading.object('contradiction', join(path, 'temperature'), 'ascending temperatures', 'temperatures in another order');
+    reading.object(
+      'contradiction',
+      join(path, 'temperature'),
+      'ascending temperatures',
+      'temperatures in another order',
+    );
     return undefined;
   }
   return { kind: 'points', temperature, value, interpolation: given.interpolation ?? 'linear' };

@@ -6,9 +6,8 @@ import type { Equilibrium, Provenance } from '../case.ts';
 import { join } from '../issues.ts';
 import type { Reading } from '../reading.ts';
 import type { EquilibriumText } from '../schema/substances.ts';
-import { readEquilibriumFile } from '../table.ts';
-import { isAscending } from './curves.ts';
-import { origin } from './substances.ts';
+import { checkTable, readEquilibriumFile } from './equilibrium-table.ts';
+import { origin } from './origin.ts';
 
 const CELSIUS_ZERO = 273.15;
 const LN_THOUSAND = Math.log(1000);
@@ -24,7 +23,12 @@ export function readEquilibrium(
   const text = given ?? chosen(reading, path, base, solventId);
   if (text === undefined) return undefined;
   const inWater = solventId === 'water';
-  const need = (key: string, own: number | undefined, listed: number | undefined, from: Origin | undefined): number | undefined => {
+  const need = (
+    key: string,
+    own: number | undefined,
+    listed: number | undefined,
+    from: Origin | undefined,
+  ): number | undefined => {
     const where = join(path, key);
     if (own !== undefined) {
       reading.stated(where);
@@ -60,9 +64,19 @@ export function readEquilibrium(
     case 'raoult': {
       const antoine = base?.antoine;
       const own = text.vapourPressure;
-      const A = need('vapourPressure.A', own?.A, antoine === undefined ? undefined : antoine.value.A + LN_THOUSAND, origin(antoine));
+      const A = need(
+        'vapourPressure.A',
+        own?.A,
+        antoine === undefined ? undefined : antoine.value.A + LN_THOUSAND,
+        origin(antoine),
+      );
       const B = need('vapourPressure.B', own?.B, antoine?.value.B, origin(antoine));
-      const C = need('vapourPressure.C', own?.C, antoine === undefined ? undefined : antoine.value.C - CELSIUS_ZERO, origin(antoine));
+      const C = need(
+        'vapourPressure.C',
+        own?.C,
+        antoine === undefined ? undefined : antoine.value.C - CELSIUS_ZERO,
+        origin(antoine),
+      );
       if (A === undefined || B === undefined || C === undefined) return undefined;
       const vapourPressure = { A, B, C };
       if (text.model === 'raoult') return { model: 'raoult', vapourPressure };
@@ -115,31 +129,4 @@ function readTable(
     return undefined;
   }
   return checkTable(reading, path, temperature, moleFraction, pressure);
-}
-
-/** A table whose axes ascend, start at zero strength, and whose rows are complete. */
-export function checkTable(
-  reading: Reading,
-  path: string,
-  temperature: readonly number[],
-  moleFraction: readonly number[],
-  pressure: readonly (readonly number[])[],
-): Equilibrium | undefined {
-  const before = reading.issues.length;
-  const fault = (key: string, expected: string, received: string): void => {
-    reading.object('contradiction', join(path, key), expected, received);
-  };
-  if (temperature.length === 0 || !isAscending(temperature)) fault('temperature', 'ascending temperatures', 'another order');
-  if (moleFraction.length < 2 || !isAscending(moleFraction)) fault('moleFraction', 'two or more ascending strengths', 'another order');
-  if (moleFraction[0] !== 0) fault('moleFraction', 'a first strength of 0', 'another one');
-  if (pressure.length !== temperature.length) {
-    fault('pressure', `${temperature.length} rows, one for each temperature`, `${pressure.length} rows`);
-  }
-  pressure.forEach((row, i) => {
-    const where = `pressure[${i}]`;
-    if (row.length !== moleFraction.length) fault(where, `${moleFraction.length} pressures`, `${row.length}`);
-    else if (row[0] !== 0) fault(where, 'a first pressure of 0 Pa', 'another one');
-    else if (row.some((p, j) => j > 0 && p < (row[j - 1] ?? p))) fault(where, 'pressures that do not fall with strength', 'a fall');
-  });
-  return reading.issues.length > before ? undefined : { model: 'table', temperature, moleFraction, pressure };
 }

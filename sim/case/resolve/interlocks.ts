@@ -30,11 +30,22 @@ export function readInterlock(
       ? undefined
       : readCondition(reading, join(path, 'resetPermissive'), given.resetPermissive, directory);
   if (given.resetPermissive !== undefined && given.kind === 'auto-start') {
-    reading.object('contradiction', join(path, 'resetPermissive'), 'no reset of an auto-start', 'one', 'only a trip latches');
+    reading.object(
+      'contradiction',
+      join(path, 'resetPermissive'),
+      'no reset of an auto-start',
+      'one',
+      'only a trip latches',
+    );
   }
   const votes = reading.fill(join(path, 'votes'), given.votes, CONTROL.votes);
   if (votes > conditions.length) {
-    reading.object('contradiction', join(path, 'votes'), `at most ${conditions.length}, the number of conditions`, String(votes));
+    reading.object(
+      'contradiction',
+      join(path, 'votes'),
+      `at most ${conditions.length}, the number of conditions`,
+      String(votes),
+    );
   }
   const delay = reading.fill(join(path, 'delay'), given.delay, CONTROL.delay);
   const whole = conditions.filter((condition) => condition !== undefined);

@@ -22,30 +22,54 @@ export function checkPhases(
   const library = SOLVENTS[solvent.id];
   const listed = CARRIERS[carrier.id];
   // An own solvent has no library entry; the oil stands in, for only its name is looked at.
-  const refusal = listed === undefined ? undefined : carrierRefusal(listed, library ?? heavyOil, coldest, column.topPressure);
+  const refusal =
+    listed === undefined ? undefined : carrierRefusal(listed, library ?? heavyOil, coldest, column.topPressure);
   if (refusal !== undefined) {
     const received =
       refusal.kind === 'same-as-solvent'
         ? `${refusal.carrier} over ${refusal.solvent}`
         : `${refusal.carrier}, which condenses at ${(refusal.saturationPressure / 1e3).toPrecision(3)} kPa(a)`;
-    reading.object('contradiction', 'carrier', `a carrier that stays a gas at ${coldest.toFixed(1)} K`, received, 'a condensing carrier is outside the model');
+    reading.object(
+      'contradiction',
+      'carrier',
+      `a carrier that stays a gas at ${coldest.toFixed(1)} K`,
+      received,
+      'a condensing carrier is outside the model',
+    );
   }
   const streams: [string, number][] = [['liquid.feed.temperature', liquid.feed.temperature]];
   if (liquid.makeUp !== undefined) streams.push(['liquid.makeUp.temperature', liquid.makeUp.temperature]);
-  if (liquid.emergencyWater !== undefined) streams.push(['liquid.emergencyWater.temperature', liquid.emergencyWater.temperature]);
+  if (liquid.emergencyWater !== undefined)
+    streams.push(['liquid.emergencyWater.temperature', liquid.emergencyWater.temperature]);
   for (const [path, T] of streams) {
     if (solvent.vapourPressure !== undefined && curveValue(solvent.vapourPressure, T) >= column.topPressure) {
-      reading.object('contradiction', path, `a temperature at which ${solvent.name} is liquid at the top pressure`, `${T.toFixed(1)} K, above its boiling point`);
+      reading.object(
+        'contradiction',
+        path,
+        `a temperature at which ${solvent.name} is liquid at the top pressure`,
+        `${T.toFixed(1)} K, above its boiling point`,
+      );
     } else if (library !== undefined && T < library.TMin) {
       const frozen = library.id === 'water';
       const received = `${T.toFixed(2)} K, below ${library.TMin} K`;
       if (frozen) reading.object('contradiction', path, 'a temperature at which water is liquid', received);
       else reading.warn('range', path, "a temperature in the range of the solvent's properties", received);
     } else if (library !== undefined && T > library.TMax) {
-      reading.warn('range', path, "a temperature in the range of the solvent's properties", `${T.toFixed(2)} K, above ${library.TMax} K`);
+      reading.warn(
+        'range',
+        path,
+        "a temperature in the range of the solvent's properties",
+        `${T.toFixed(2)} K, above ${library.TMax} K`,
+      );
     }
   }
   if (liquid.cooler !== undefined && liquid.cooler.coolantTemperature > liquid.feed.temperature) {
-    reading.warn('style', 'liquid.cooler.coolantTemperature', 'a coolant colder than the solvent', 'a warmer one', 'this cooler heats');
+    reading.warn(
+      'style',
+      'liquid.cooler.coolantTemperature',
+      'a coolant colder than the solvent',
+      'a warmer one',
+      'this cooler heats',
+    );
   }
 }

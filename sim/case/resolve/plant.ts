@@ -9,11 +9,32 @@ import type { Substances } from './strengths.ts';
 import { readComposition, readHumidity } from './strengths.ts';
 
 /** The gas supply, or undefined after noting why not. `pressure`: at the top, Pa. */
-export function readGas(reading: Reading, given: GasText, substances: Substances, pressure: number): GasSupply | undefined {
+export function readGas(
+  reading: Reading,
+  given: GasText,
+  substances: Substances,
+  pressure: number,
+): GasSupply | undefined {
   const path = 'gas';
   const { feed } = given;
-  const composition = readComposition(reading, 'gas.feed.composition', feed.composition, true, substances, feed.temperature, GAS.composition);
-  const humidity = readHumidity(reading, 'gas.feed.humidity', feed.humidity, substances.solvent, feed.temperature, pressure, GAS.humidity);
+  const composition = readComposition(
+    reading,
+    'gas.feed.composition',
+    feed.composition,
+    true,
+    substances,
+    feed.temperature,
+    GAS.composition,
+  );
+  const humidity = readHumidity(
+    reading,
+    'gas.feed.humidity',
+    feed.humidity,
+    substances.solvent,
+    feed.temperature,
+    pressure,
+    GAS.humidity,
+  );
   if (given.range !== undefined && given.range[0] >= given.range[1]) {
     reading.object('contradiction', 'gas.range', 'a lower and a higher rate', 'no range between them');
   }
@@ -34,7 +55,10 @@ export function readGas(reading: Reading, given: GasText, substances: Substances
     diversion:
       given.diversion === undefined
         ? undefined
-        : { tag: given.diversion.tag, stroke: reading.fill('gas.diversion.stroke', given.diversion.stroke, GAS.stroke) },
+        : {
+            tag: given.diversion.tag,
+            stroke: reading.fill('gas.diversion.stroke', given.diversion.stroke, GAS.stroke),
+          },
   };
 }
 
@@ -72,7 +96,15 @@ export function readLiquid(
   const design = given.feed.rate;
   const perRate = (share: Default<number>): Default<number> => ({ ...share, value: share.value * design });
   const stream = (path: string, text: LiquidText['feed']): Stream | undefined => {
-    const composition = readComposition(reading, join(path, 'composition'), text.composition, false, substances, text.temperature, LIQUID.composition);
+    const composition = readComposition(
+      reading,
+      join(path, 'composition'),
+      text.composition,
+      false,
+      substances,
+      text.temperature,
+      LIQUID.composition,
+    );
     return composition === undefined ? undefined : { rate: text.rate, temperature: text.temperature, composition };
   };
   const before = reading.issues.length;
@@ -81,13 +113,25 @@ export function readLiquid(
   const recirculated = given.mode === 'recirculated';
   const makeUpText = given.makeUp === 'none' ? undefined : given.makeUp;
   if (recirculated && given.makeUp === undefined) {
-    reading.object('missing', 'liquid.makeUp', 'a make-up, or "none"', 'nothing', 'a recirculated solvent that evaporates or is bled needs one');
+    reading.object(
+      'missing',
+      'liquid.makeUp',
+      'a make-up, or "none"',
+      'nothing',
+      'a recirculated solvent that evaporates or is bled needs one',
+    );
   }
   if (!recirculated && makeUpText !== undefined) {
     reading.object('contradiction', 'liquid.makeUp', 'no make-up for a once-through solvent', 'a make-up');
   }
   if (!recirculated && given.bleed !== undefined) {
-    reading.object('contradiction', 'liquid.bleed', 'no bleed for a once-through solvent', 'a bleed', 'the drain takes it all');
+    reading.object(
+      'contradiction',
+      'liquid.bleed',
+      'no bleed for a once-through solvent',
+      'a bleed',
+      'the drain takes it all',
+    );
   }
   const makeUpStream = makeUpText === undefined ? undefined : stream('liquid.makeUp', makeUpText);
   const waterText = given.emergencyWater;
@@ -102,7 +146,8 @@ export function readLiquid(
       `${minimumLevel} m against ${sump.normalLevel} m`,
     );
   }
-  const stroke = (path: string, value: number | undefined): number => reading.fill(join(path, 'stroke'), value, LIQUID.stroke);
+  const stroke = (path: string, value: number | undefined): number =>
+    reading.fill(join(path, 'stroke'), value, LIQUID.stroke);
   const supply = {
     mode: given.mode,
     pumps: {
@@ -118,7 +163,11 @@ export function readLiquid(
       tag: reading.fill('liquid.valve.tag', given.valve?.tag, LIQUID.valveTag),
       stroke: stroke('liquid.valve', given.valve?.stroke),
     },
-    distributorVolume: reading.fill('liquid.distributorVolume', given.distributorVolume, perRate(LIQUID.distributorSeconds)),
+    distributorVolume: reading.fill(
+      'liquid.distributorVolume',
+      given.distributorVolume,
+      perRate(LIQUID.distributorSeconds),
+    ),
     cooler: given.cooler,
     makeUp:
       makeUpText === undefined || makeUpStream === undefined
@@ -148,8 +197,12 @@ export function readLiquid(
 }
 
 function capacity(reading: Reading, path: string, given: number | undefined, rate: number): number {
-  const value = reading.fill(join(path, 'capacity'), given, { ...LIQUID.capacityShare, value: LIQUID.capacityShare.value * rate });
-  if (value < rate) reading.object('contradiction', join(path, 'capacity'), `at least the design rate, ${rate} m3/s`, `${value} m3/s`);
+  const value = reading.fill(join(path, 'capacity'), given, {
+    ...LIQUID.capacityShare,
+    value: LIQUID.capacityShare.value * rate,
+  });
+  if (value < rate)
+    reading.object('contradiction', join(path, 'capacity'), `at least the design rate, ${rate} m3/s`, `${value} m3/s`);
   return value;
 }
 
@@ -162,7 +215,10 @@ function readSump(
   const path = 'liquid.sump';
   const sump = given.sump ?? {};
   const section = (Math.PI / 4) * column.diameter ** 2;
-  const area = reading.fill(join(path, 'area'), sump.area, { ...LIQUID.sumpAreaShare, value: LIQUID.sumpAreaShare.value * section });
+  const area = reading.fill(join(path, 'area'), sump.area, {
+    ...LIQUID.sumpAreaShare,
+    value: LIQUID.sumpAreaShare.value * section,
+  });
   const normalLevel = reading.fill(join(path, 'normalLevel'), sump.normalLevel, LIQUID.normalLevel);
   const overflowLevel = reading.fill(join(path, 'overflowLevel'), sump.overflowLevel, {
     ...LIQUID.overflowShare,
@@ -174,7 +230,12 @@ function readSump(
     stroke: reading.fill(join(path, 'drain.stroke'), sump.drain?.stroke, LIQUID.drainStroke),
   };
   if (overflowLevel <= normalLevel) {
-    reading.object('contradiction', join(path, 'overflowLevel'), `a level above the normal one, ${normalLevel} m`, `${overflowLevel} m`);
+    reading.object(
+      'contradiction',
+      join(path, 'overflowLevel'),
+      `a level above the normal one, ${normalLevel} m`,
+      `${overflowLevel} m`,
+    );
     return undefined;
   }
   if (given.mode === 'once-through' && drain.capacity < given.feed.rate) {

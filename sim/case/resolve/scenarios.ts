@@ -31,7 +31,11 @@ export function readScenario(
   refuseCycle(reading, path, given.steps, ids);
   const initial = reading.fill(join(path, 'initial'), given.initial, SCENARIO.initial);
   checkDuration(reading, path, given);
-  const service = reading.fill<ScenarioText['interlocks'] | 'all'>(join(path, 'interlocks'), given.interlocks, SCENARIO.interlocks);
+  const service = reading.fill<ScenarioText['interlocks'] | 'all'>(
+    join(path, 'interlocks'),
+    given.interlocks,
+    SCENARIO.interlocks,
+  );
   if (Array.isArray(service)) {
     service.forEach((tag, index) => {
       knownTag(reading, `${path}.interlocks[${index}]`, 'the tag of an interlock', tag, directory.interlockTags);
@@ -79,7 +83,13 @@ function readTrigger(
 ): Step['trigger'] | undefined {
   const { at, when, after, delay } = given;
   if (at !== undefined && (when !== undefined || after !== undefined)) {
-    reading.object('contradiction', path, 'either "at", or "when", or "after"', 'a time and a condition', 'a delay after a step is "delay"');
+    reading.object(
+      'contradiction',
+      path,
+      'either "at", or "when", or "after"',
+      'a time and a condition',
+      'a delay after a step is "delay"',
+    );
     return undefined;
   }
   if (at === undefined && when === undefined && after === undefined) {
@@ -87,11 +97,23 @@ function readTrigger(
     return undefined;
   }
   if (after !== undefined && !ids.includes(after)) {
-    reading.refuse('reference', join(path, 'after'), 'the id of a step of this scenario', after, suggestion(after, ids));
+    reading.refuse(
+      'reference',
+      join(path, 'after'),
+      'the id of a step of this scenario',
+      after,
+      suggestion(after, ids),
+    );
     return undefined;
   }
   if (delay !== undefined && (after === undefined || when !== undefined)) {
-    reading.object('contradiction', join(path, 'delay'), 'a delay only beside "after" alone', 'one', 'with "when" use its "for"');
+    reading.object(
+      'contradiction',
+      join(path, 'delay'),
+      'a delay only beside "after" alone',
+      'one',
+      'with "when" use its "for"',
+    );
     return undefined;
   }
   if (when !== undefined) {
@@ -104,7 +126,12 @@ function readTrigger(
 
 const STEP_KEYS: ReadonlySet<string> = new Set(['id', 'label', 'role', 'at', 'when', 'after', 'delay', 'do']);
 
-function readStepActions(reading: Reading, path: string, given: StepText, directory: Directory): readonly Action[] | undefined {
+function readStepActions(
+  reading: Reading,
+  path: string,
+  given: StepText,
+  directory: Directory,
+): readonly Action[] | undefined {
   const inline: ActionText = Object.fromEntries(
     Object.entries(given).filter(([key, value]) => !STEP_KEYS.has(key) && value !== undefined),
   );
@@ -112,7 +139,13 @@ function readStepActions(reading: Reading, path: string, given: StepText, direct
   if (given.do === undefined) return readAction(reading, path, inline, directory);
   if (hasInline) {
     const keys = Object.keys(inline).join(', ');
-    reading.object('contradiction', path, 'either "do" or one action in the step', `"do" beside ${keys}`, 'move it into "do"');
+    reading.object(
+      'contradiction',
+      path,
+      'either "do" or one action in the step',
+      `"do" beside ${keys}`,
+      'move it into "do"',
+    );
     return undefined;
   }
   return given.do.flatMap((action, index) => readAction(reading, `${path}.do[${index}]`, action, directory) ?? []);

@@ -27,7 +27,12 @@ export function basisOf(substances: Substances, solute: number, temperature: num
 export function soluteIndex(reading: Reading, path: string, substances: Substances, id: string): number | undefined {
   const index = substances.solutes.findIndex((solute) => solute.id === id);
   if (index >= 0) return index;
-  reading.unknown(path, 'a solute of this case', id, substances.solutes.map((solute) => solute.id));
+  reading.unknown(
+    path,
+    'a solute of this case',
+    id,
+    substances.solutes.map((solute) => solute.id),
+  );
   return undefined;
 }
 
@@ -107,10 +112,20 @@ export function readHumidity(
     return undefined;
   } else {
     const saturated = curveValue(solvent.vapourPressure, T);
-    const partial = dewPoint.ok ? curveValue(solvent.vapourPressure, dewPoint.value) : fraction.ok ? fraction.value * p : 0;
+    const partial = dewPoint.ok
+      ? curveValue(solvent.vapourPressure, dewPoint.value)
+      : fraction.ok
+        ? fraction.value * p
+        : 0;
     humidity = partial / saturated;
   }
   if (humidity >= 0 && humidity <= 1 + 1e-9) return Math.min(humidity, 1);
-  reading.refuse('range', path, `a humidity from 0 to 100 % at ${T.toFixed(1)} K`, text, 'a gas with droplets is outside the model');
+  reading.refuse(
+    'range',
+    path,
+    `a humidity from 0 to 100 % at ${T.toFixed(1)} K`,
+    text,
+    'a gas with droplets is outside the model',
+  );
   return undefined;
 }

@@ -6,13 +6,14 @@ import type { Solute as LibrarySolute } from '../../properties/library/solutes.t
 import { SOLVENTS } from '../../properties/library/solvents.ts';
 import { idealGasHeatCapacity } from '../../properties/ideal-gas.ts';
 import type { Sourced } from '../../properties/provenance.ts';
-import type { Carrier, Curve, Provenance, Solute, Solvent } from '../case.ts';
+import type { Carrier, Curve, Solute, Solvent } from '../case.ts';
 import { join } from '../issues.ts';
 import type { Default, Reading } from '../reading.ts';
 import type { CarrierText, SoluteText, SolventText } from '../schema/substances.ts';
 import type { CurveProperty, CurveText } from './curves.ts';
 import { readCurve } from './curves.ts';
 import { readEquilibrium } from './equilibrium.ts';
+import { origin } from './origin.ts';
 
 /** Fuller's volume of an oil's vapour stands for C18H38, 18 x 15.9 + 38 x 2.31 [Fuller1969]. */
 const OIL_DIFFUSION_VOLUME = 374;
@@ -25,7 +26,12 @@ export function readSolvent(reading: Reading, given: SolventText): Solvent | und
   const own = typeof given === 'string' ? { base: given } : given;
   const base = own.base === undefined ? undefined : SOLVENTS[own.base];
   if (own.base !== undefined && base === undefined) {
-    reading.unknown(typeof given === 'string' ? path : join(path, 'base'), 'a library solvent', own.base, Object.keys(SOLVENTS));
+    reading.unknown(
+      typeof given === 'string' ? path : join(path, 'base'),
+      'a library solvent',
+      own.base,
+      Object.keys(SOLVENTS),
+    );
     return undefined;
   }
   const take = taker(reading, path, base !== undefined);
@@ -33,14 +39,27 @@ export function readSolvent(reading: Reading, given: SolventText): Solvent | und
   const from = (property: CurveProperty, key: string): Default<Curve> | undefined =>
     base === undefined
       ? undefined
-      : { value: { kind: 'library', id: `${base.id}.${property}` }, ...origin(base.provenance[key] ?? base.provenance['liquid']) };
+      : {
+          value: { kind: 'library', id: `${base.id}.${property}` },
+          ...origin(base.provenance[key] ?? base.provenance['liquid']),
+        };
   const isWater = base?.id === 'water';
   const source = base === undefined ? undefined : `library solvent ${base.id}`;
   const molarMass = take('molarMass', own.molarMass, plain(base?.molarMass, source));
   const density = curve('density', own.density, from('density', 'density'), 'density');
   const viscosity = curve('viscosity', own.viscosity, from('viscosity', 'viscosity'), 'viscosity');
-  const surfaceTension = curve('surfaceTension', own.surfaceTension, from('surface-tension', 'surfaceTension'), 'surface-tension');
-  const heatCapacity = curve('heatCapacity', own.heatCapacity, from('molar-heat-capacity', 'heatCapacity'), 'molar-heat-capacity');
+  const surfaceTension = curve(
+    'surfaceTension',
+    own.surfaceTension,
+    from('surface-tension', 'surfaceTension'),
+    'surface-tension',
+  );
+  const heatCapacity = curve(
+    'heatCapacity',
+    own.heatCapacity,
+    from('molar-heat-capacity', 'heatCapacity'),
+    'molar-heat-capacity',
+  );
   const vapourHeatCapacity = curve(
     'vapourHeatCapacity',
     own.vapourHeatCapacity,
@@ -53,7 +72,9 @@ export function readSolvent(reading: Reading, given: SolventText): Solvent | und
   const diffusionVolume = take(
     'diffusionVolume',
     own.diffusionVolume,
-    isWater ? sourced(steam.diffusionVolume) : plain(base === undefined ? undefined : OIL_DIFFUSION_VOLUME, 'C18H38 by [Fuller1969]'),
+    isWater
+      ? sourced(steam.diffusionVolume)
+      : plain(base === undefined ? undefined : OIL_DIFFUSION_VOLUME, 'C18H38 by [Fuller1969]'),
   );
   const vapourPressure =
     own.vapourPressure === 'none'
@@ -64,15 +85,30 @@ export function readSolvent(reading: Reading, given: SolventText): Solvent | und
           : undefined
         : readCurve(reading, join(path, 'vapourPressure'), own.vapourPressure, 'vapour-pressure');
   if (
-    molarMass === undefined || density === undefined || viscosity === undefined || surfaceTension === undefined ||
-    heatCapacity === undefined || vapourHeatCapacity === undefined || association === undefined || diffusionVolume === undefined
+    molarMass === undefined ||
+    density === undefined ||
+    viscosity === undefined ||
+    surfaceTension === undefined ||
+    heatCapacity === undefined ||
+    vapourHeatCapacity === undefined ||
+    association === undefined ||
+    diffusionVolume === undefined
   ) {
     return undefined;
   }
   const id = own.id ?? base?.id ?? 'own-solvent';
   return {
-    id, name: own.name ?? base?.name ?? id, molarMass, density, viscosity, surfaceTension, heatCapacity,
-    vapourPressure, vapourHeatCapacity, association, diffusionVolume,
+    id,
+    name: own.name ?? base?.name ?? id,
+    molarMass,
+    density,
+    viscosity,
+    surfaceTension,
+    heatCapacity,
+    vapourPressure,
+    vapourHeatCapacity,
+    association,
+    diffusionVolume,
   };
 }
 
@@ -82,7 +118,12 @@ export function readCarrier(reading: Reading, given: CarrierText): Carrier | und
   const own = typeof given === 'string' ? { base: given } : given;
   const base = own.base === undefined ? undefined : CARRIERS[own.base];
   if (own.base !== undefined && base === undefined) {
-    reading.unknown(typeof given === 'string' ? path : join(path, 'base'), 'a library carrier', own.base, Object.keys(CARRIERS));
+    reading.unknown(
+      typeof given === 'string' ? path : join(path, 'base'),
+      'a library carrier',
+      own.base,
+      Object.keys(CARRIERS),
+    );
     return undefined;
   }
   const take = taker(reading, path, base !== undefined);
@@ -91,10 +132,26 @@ export function readCarrier(reading: Reading, given: CarrierText): Carrier | und
     base === undefined ? undefined : { value: { kind: 'library', id: `${base.id}.${property}` }, ...origin(entry) };
   const molarMass = take('molarMass', own.molarMass, sourced(base?.molarMass));
   const viscosity = curve('viscosity', own.viscosity, from('viscosity', base?.viscosity), 'viscosity');
-  const heatCapacity = curve('heatCapacity', own.heatCapacity, from('molar-heat-capacity', base?.heatCapacity), 'molar-heat-capacity');
-  const conductivity = curve('conductivity', own.conductivity, from('conductivity', base?.thermalConductivity), 'conductivity');
+  const heatCapacity = curve(
+    'heatCapacity',
+    own.heatCapacity,
+    from('molar-heat-capacity', base?.heatCapacity),
+    'molar-heat-capacity',
+  );
+  const conductivity = curve(
+    'conductivity',
+    own.conductivity,
+    from('conductivity', base?.thermalConductivity),
+    'conductivity',
+  );
   const diffusionVolume = take('diffusionVolume', own.diffusionVolume, sourced(base?.diffusionVolume));
-  if (molarMass === undefined || viscosity === undefined || heatCapacity === undefined || conductivity === undefined || diffusionVolume === undefined) {
+  if (
+    molarMass === undefined ||
+    viscosity === undefined ||
+    heatCapacity === undefined ||
+    conductivity === undefined ||
+    diffusionVolume === undefined
+  ) {
     return undefined;
   }
   const id = own.id ?? base?.id ?? 'own-carrier';
@@ -106,13 +163,23 @@ export function readSolute(reading: Reading, path: string, given: SoluteText, so
   const own = typeof given === 'string' ? { base: given } : given;
   const base = own.base === undefined ? undefined : SOLUTES[own.base];
   if (own.base !== undefined && base === undefined) {
-    reading.unknown(typeof given === 'string' ? path : join(path, 'base'), 'a library solute', own.base, Object.keys(SOLUTES));
+    reading.unknown(
+      typeof given === 'string' ? path : join(path, 'base'),
+      'a library solute',
+      own.base,
+      Object.keys(SOLUTES),
+    );
     return undefined;
   }
   const take = taker(reading, path, base !== undefined);
   const curve = curveTaker(reading, path, base !== undefined);
   const molarMass = take('molarMass', own.molarMass, sourced(base?.molarMass));
-  const vapourHeatCapacity = curve('vapourHeatCapacity', own.vapourHeatCapacity, vapourCurve(base), 'molar-heat-capacity');
+  const vapourHeatCapacity = curve(
+    'vapourHeatCapacity',
+    own.vapourHeatCapacity,
+    vapourCurve(base),
+    'molar-heat-capacity',
+  );
   const heatCapacity = take('heatCapacity', own.heatCapacity, sourced(base?.liquidHeatCapacity));
   const molarVolume = take('molarVolume', own.molarVolume, sourced(base?.liquidVolume));
   const boilingVolume = take('boilingVolume', own.boilingVolume, sourced(base?.boilingVolume, 1e6));
@@ -120,8 +187,13 @@ export function readSolute(reading: Reading, path: string, given: SoluteText, so
   const equilibrium = readEquilibrium(reading, join(path, 'equilibrium'), own.equilibrium, base, solventId);
   const liquidDiffusivity = liquidDiffusivityOf(reading, path, own.liquidDiffusivity, base, solventId);
   if (
-    molarMass === undefined || vapourHeatCapacity === undefined || heatCapacity === undefined || molarVolume === undefined ||
-    boilingVolume === undefined || diffusionVolume === undefined || equilibrium === undefined
+    molarMass === undefined ||
+    vapourHeatCapacity === undefined ||
+    heatCapacity === undefined ||
+    molarVolume === undefined ||
+    boilingVolume === undefined ||
+    diffusionVolume === undefined ||
+    equilibrium === undefined
   ) {
     return undefined;
   }
@@ -144,6 +216,7 @@ export function readSolute(reading: Reading, path: string, given: SoluteText, so
 
 /** K at which the library lists diffusivities in water. */
 const DIFFUSIVITY_TEMPERATURE = 298.15;
+const WILKE_CHANG = { source: '[Wilke1955]', verified: 'seen' } as const;
 
 function liquidDiffusivityOf(
   reading: Reading,
@@ -158,14 +231,13 @@ function liquidDiffusivityOf(
     reading.stated(key);
     return given;
   }
-  const listed = solventId === 'water' ? base?.diffusivityInWater : undefined;
-  if (listed === undefined) {
-    reading.taken(key, '[Wilke1955]', 'seen');
-    return undefined;
-  }
-  const { source, verified } = origin(listed);
+  const inWater = solventId === 'water' ? base?.diffusivityInWater : undefined;
+  const elsewhere = base?.liquidDiffusivity?.[solventId];
+  const listed = inWater ?? elsewhere;
+  const { source, verified } = listed === undefined ? WILKE_CHANG : origin(listed);
   reading.taken(key, source, verified);
-  return { value: listed.value, temperature: DIFFUSIVITY_TEMPERATURE };
+  if (inWater !== undefined) return { value: inWater.value, temperature: DIFFUSIVITY_TEMPERATURE };
+  return elsewhere === undefined ? undefined : { value: elsewhere.value.D, temperature: elsewhere.value.T };
 }
 
 /** Points every 10 K of the library's polynomial; straight lines between them are within 1e-4. */
@@ -177,12 +249,6 @@ function vapourCurve(base: LibrarySolute | undefined): Default<Curve> | undefine
     value: { kind: 'points', temperature, value, interpolation: 'linear' },
     ...origin(base.gasHeatCapacity),
   };
-}
-
-/** Origin of a library number in the words of a case. */
-export function origin(entry: Sourced<unknown> | undefined): Pick<Provenance, 'source' | 'verified'> {
-  if (entry === undefined) return { source: 'library', verified: 'from memory' };
-  return { source: entry.source, verified: entry.verified === 'demo' ? 'judgement' : entry.verified };
 }
 
 function sourced(entry: Sourced | undefined, factor = 1): Default<number> | undefined {
@@ -198,7 +264,13 @@ function taker(reading: Reading, path: string, hasBase: boolean) {
   return <T>(key: string, given: T | undefined, fallback: Default<T> | undefined): T | undefined => {
     const where = join(path, key);
     if (given === undefined && fallback === undefined) {
-      reading.object('missing', where, 'a value', 'nothing', hasBase ? 'the library has none' : 'without "base" every number is needed');
+      reading.object(
+        'missing',
+        where,
+        'a value',
+        'nothing',
+        hasBase ? 'the library has none' : 'without "base" every number is needed',
+      );
       return undefined;
     }
     return fallback === undefined ? given : reading.fill(where, given, fallback);

@@ -19,7 +19,12 @@ export function checkTags(reading: Reading, uses: readonly TagUse[]): void {
   for (const use of uses) {
     const other = first.get(use.tag);
     if (other !== undefined) {
-      reading.object('duplicate', use.path, 'a tag that nothing else carries', `"${use.tag}", the tag of ${other.what}`);
+      reading.object(
+        'duplicate',
+        use.path,
+        'a tag that nothing else carries',
+        `"${use.tag}", the tag of ${other.what}`,
+      );
       continue;
     }
     first.set(use.tag, use);

@@ -17,11 +17,22 @@ export function readUncertain(
   paths: readonly string[],
 ): Uncertain | undefined {
   if (!paths.includes(given.path)) {
-    reading.refuse('reference', join(path, 'path'), 'the path of a number in this case', given.path, suggestion(given.path, paths));
+    reading.refuse(
+      'reference',
+      join(path, 'path'),
+      'the path of a number in this case',
+      given.path,
+      suggestion(given.path, paths),
+    );
     return undefined;
   }
   if ((given.times === undefined) === (given.between === undefined)) {
-    reading.object('contradiction', path, 'either "times" or "between"', given.times === undefined ? 'neither' : 'both');
+    reading.object(
+      'contradiction',
+      path,
+      'either "times" or "between"',
+      given.times === undefined ? 'neither' : 'both',
+    );
     return undefined;
   }
   const key = given.times === undefined ? 'between' : 'times';

@@ -104,7 +104,9 @@ export const columnSchema = group({
   transfer: maybe(transfer),
   flooding: maybe(
     group({
-      deflooding: maybe(quantity('fraction', { above: 0, max: 1 }, 'share of the flooding velocity at which a flooded bed recovers')),
+      deflooding: maybe(
+        quantity('fraction', { above: 0, max: 1 }, 'share of the flooding velocity at which a flooded bed recovers'),
+      ),
       transferLeft: maybe(quantity('fraction', SHARE, 'share of the transfer left in a flooded segment')),
       fullShare: maybe(quantity('fraction', { above: 0, max: 1 }, 'largest share of the voids that liquid fills')),
     }),

@@ -42,7 +42,7 @@ export const instrumentSchema = group({
   lag: maybe(quantity('time', DELAY, 'first order')),
   deadTime: maybe(quantity('time', DELAY, 'pure, such as a sample line')),
   bias: maybe(text("offset, in the instrument's kind", '5 ppmv')),
-  drift: maybe(text("change of the offset per time", '2 ppmv/h')),
+  drift: maybe(text('change of the offset per time', '2 ppmv/h')),
   noise: maybe(
     group({
       sigma: text('standard deviation', '1.5 ppmv'),

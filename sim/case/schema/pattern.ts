@@ -12,7 +12,10 @@ export function quantityPattern(kind: Kind): string {
   const spellings: string[] = [];
   for (const unit of KINDS[kind].units) spellings.push(unit.symbol, ...unit.aliases);
   const bare = spellings.includes('');
-  const units = spellings.filter((unit) => unit !== '').map(unitPattern).join('|');
+  const units = spellings
+    .filter((unit) => unit !== '')
+    .map(unitPattern)
+    .join('|');
   const one = `${NUMBER} ?(${units})${bare ? '?' : ''}`;
   return kind === 'time' ? `^(${one}|${DURATION}|${CLOCK})$` : `^${one}$`;
 }

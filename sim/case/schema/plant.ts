@@ -19,7 +19,12 @@ export const gasSchema = group({
   feed: group({
     rate: quantity('molar-flow', { above: 0, max: 1e6 }, 'wet total'),
     temperature: quantity('temperature', { min: 200, max: 600 }),
-    humidity: maybe(text("relative (\"50 %\"), as dew point (\"12 degC\") or as mole fraction (\"1.2 mol%\") of the solvent's vapour", '50 %')),
+    humidity: maybe(
+      text(
+        'relative ("50 %"), as dew point ("12 degC") or as mole fraction ("1.2 mol%") of the solvent\'s vapour',
+        '50 %',
+      ),
+    ),
     composition: maybe(gasComposition),
   }),
   range: maybe(v.tuple([quantity('molar-flow', NOT_NEGATIVE), quantity('molar-flow', POSITIVE)])),

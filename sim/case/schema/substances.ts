@@ -65,7 +65,11 @@ const vanLaar = {
 
 /** How a solute's partial pressure over the liquid is found. */
 export const equilibrium = v.variant('model', [
-  group({ model: v.literal('henry'), solubility: maybe(henry.solubility), temperatureFactor: maybe(henry.temperatureFactor) }),
+  group({
+    model: v.literal('henry'),
+    solubility: maybe(henry.solubility),
+    temperatureFactor: maybe(henry.temperatureFactor),
+  }),
   group({
     model: v.literal('henry-van-laar'),
     solubility: maybe(henry.solubility),
