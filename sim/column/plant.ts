@@ -33,6 +33,8 @@ export interface ShownValues {
 export const PRESSURE_LAG = 0.5;
 /** Lag of the gas split between two zones, s. */
 const SPLIT_LAG = 1;
+/** A lag, stroke or run-up that a case gives as zero acts within this time, s. */
+const LEAST_LAG = 1e-3;
 /** Share of a stroke time that makes a first-order lag reach 95 % of the travel. */
 const STROKE_LAGS = 3;
 /** Time in which an overflow takes away what stands above its edge, s. */
@@ -356,7 +358,7 @@ export function createPlant(parts: PlantParts): Plant {
         return;
       }
       const target = controller >= 0 ? outputsNow[controller] : modes.valveCommand[name];
-      dydt[at] = (STROKE_LAGS * (target - y[at])) / stroke;
+      dydt[at] = (STROKE_LAGS * (target - y[at])) / Math.max(stroke, LEAST_LAG);
     };
     move('solvent', liquid.valve.stroke, valveController.solvent);
     move('drain', liquid.sump.drain.stroke, valveController.drain);
@@ -372,7 +374,7 @@ export function createPlant(parts: PlantParts): Plant {
     const damper = y[layout.valves['gas-damper']];
     const { source } = gas;
     if (source.kind === 'forced') {
-      dydt[layout.gasFlow] = (channels.gasRate * damper - y[layout.gasFlow]) / source.lag;
+      dydt[layout.gasFlow] = (channels.gasRate * damper - y[layout.gasFlow]) / Math.max(source.lag, LEAST_LAG);
       dydt[layout.fanSpeed] = 0;
       return;
     }
@@ -382,15 +384,23 @@ export function createPlant(parts: PlantParts): Plant {
     const Q = fanFlow(source, speed, drop, self.ductResistance, damper);
     const pressure = topPressure(y) + drop;
     const target = ((Q * pressure) / (GAS_CONSTANT * channels.gasTemperature)) * (channels.gasRate / gas.feed.rate);
-    dydt[layout.gasFlow] = (target - y[layout.gasFlow]) / source.lag;
-    dydt[layout.fanSpeed] = speedRate(speed, 1, modes.fanRunning, source.coastDown, source.runUp);
+    dydt[layout.gasFlow] = (target - y[layout.gasFlow]) / Math.max(source.lag, LEAST_LAG);
+    dydt[layout.fanSpeed] = speedRate(
+      speed,
+      1,
+      modes.fanRunning,
+      Math.max(source.coastDown, LEAST_LAG),
+      Math.max(source.runUp, LEAST_LAG),
+    );
   };
 
   const pumpRates = (y: Float64Array, dydt: Float64Array): void => {
     const target = speedController >= 0 ? outputsNow[speedController] : channels.pumpSpeed;
+    const coastDown = Math.max(liquid.pumps.coastDown, LEAST_LAG);
+    const runUp = Math.max(liquid.pumps.runUp, LEAST_LAG);
     for (let i = 0; i < 2; i++) {
       const at = layout.pumpSpeed[i];
-      dydt[at] = speedRate(y[at], target, modes.pumpRunning[i], liquid.pumps.coastDown, liquid.pumps.runUp);
+      dydt[at] = speedRate(y[at], target, modes.pumpRunning[i], coastDown, runUp);
     }
   };
 
