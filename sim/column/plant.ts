@@ -49,6 +49,7 @@ export interface PlantFlows {
   gasToBed: number;
   gasDiverted: number;
   /** Pump delivery into the distributor. */ readonly delivery: LiquidStream;
+  /** Drawn from the sump, m3/s at its temperature (recirculated). */ drawn: number;
   readonly emergency: LiquidStream;
   readonly makeUp: LiquidStream;
   /** m3/s */ drain: number;
@@ -135,6 +136,7 @@ export function createPlant(parts: PlantParts): Plant {
     gasToBed: 0,
     gasDiverted: 0,
     delivery: createStream(K),
+    drawn: 0,
     emergency: createStream(K),
     makeUp: createStream(K),
     drain: 0,
@@ -210,16 +212,22 @@ export function createPlant(parts: PlantParts): Plant {
       freshLiquid(flows.delivery, rate, channels.liquidTemperature, channels.liquidComposition);
     } else {
       rate *= suction();
-      flows.delivery.rate = rate;
-      flows.delivery.concentration.set(sump.concentration);
+      flows.drawn = rate;
       coolerIn = sump.temperature;
       let T = coolerIn;
       if (liquid.cooler !== undefined) {
         const demand = coolerController >= 0 ? outputsNow[coolerController] : 1;
         T -= liquid.cooler.effectiveness * channels.cooling * demand * (T - channels.coolantTemperature);
       }
+      // The same moles at another temperature take another volume.
+      const v0 = molarVolume(T);
+      let solutes = 0;
+      for (let k = 0; k < K; k++) solutes += sump.concentration[k] * fluids.soluteVolume[k + 1];
+      const swell = ((1 - solutes) * v0) / sump.molarVolume + solutes;
+      flows.delivery.rate = rate * swell;
+      for (let k = 0; k < K; k++) flows.delivery.concentration[k] = sump.concentration[k] / swell;
       flows.delivery.temperature = T;
-      flows.delivery.molarVolume = molarVolume(T);
+      flows.delivery.molarVolume = v0;
     }
     if (liquid.emergencyWater !== undefined) {
       const e = liquid.emergencyWater;
@@ -421,7 +429,7 @@ export function createPlant(parts: PlantParts): Plant {
     const at = layout.sump;
     for (let k = 0; k <= components; k++) dydt[at + k] = 0;
     for (const chain of chains[beds - 1]) addStream(fluids, bottomOf(chain), 1, dydt, at);
-    addStream(fluids, fromVessel(sump, flows.drain + flows.bleed + flows.overflow + (isRecirculated ? flows.delivery.rate : 0)), -1, dydt, at);
+    addStream(fluids, fromVessel(sump, flows.drain + flows.bleed + flows.overflow + flows.drawn), -1, dydt, at);
     if (liquid.makeUp !== undefined) addStream(fluids, flows.makeUp, 1, dydt, at);
   };
 
@@ -488,7 +496,8 @@ export function createPlant(parts: PlantParts): Plant {
     // Liquid out, carried over, heat lost.
     gather.fill(0);
     addStream(fluids, fromVessel(sump, flows.drain + flows.bleed + flows.overflow), 1, gather, 0);
-    flows.carryOver = Math.max(0, flows.offered[0] - summed(0, op.accepted));
+    // Not negative, since a chain accepts at most what is offered; no bound here, so that slopes stay exact.
+    flows.carryOver = flows.offered[0] - summed(0, op.accepted);
     addStream(fluids, fromVessel(vessels[0], flows.carryOver), 1, gather, 0);
     if (isRecirculated) coolerHeat();
     for (let k = 0; k < components; k++) dydt[netIn + k] -= gather[k];
@@ -577,7 +586,7 @@ export function createPlant(parts: PlantParts): Plant {
       case 'distributor-volume':
         return vessels[0].volume;
       case 'carry-over':
-        return Math.max(0, flows.offered[0] - summed(0, op.accepted));
+        return flows.offered[0] - summed(0, op.accepted);
       case 'pump-speed':
         return Math.max(y[layout.pumpSpeed[0]], y[layout.pumpSpeed[1]]);
       case 'make-up-flow':
