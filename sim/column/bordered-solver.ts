@@ -17,6 +17,7 @@ function eliminationOrder(layout: Layout, leaves: ReadonlySet<number>): number[]
       order.push(layout.size + chain.firstFlow + c + 1);
     }
   }
+  for (let j = layout.firstDrop; j < layout.auxiliary; j++) order.push(layout.size + j);
   for (let j = 0; j < layout.coreSize; j++) {
     if (!leaves.has(layout.coreFirst + j)) order.push(layout.coreFirst + j);
   }

@@ -260,12 +260,15 @@ export function createChain(parts: ChainParts): Chain {
     gasFluxes(N, G);
     for (let c = N - 1; c >= 0; c--) {
       const at = c * stride;
-      G = gasOut(c, G, displaced(y, dydt, c));
+      const taken = displaced(y, dydt, c);
+      const entering = G;
+      G = gasOut(c, entering, taken);
       if (G < 0) {
         // Drawn back: the gas above (the cell's own at the top) comes down.
         const from = c > 0 ? c - 1 : 0;
         for (let k = 0; k < components; k++) gasFace[at + k] = q[from * P + index.y + k];
         gasFace[at + components] = q[from * P + index.TG];
+        G = gasOut(c, entering, taken);
       }
       faceFlow[c] = G;
       gasFluxes(c, G);

@@ -2,8 +2,7 @@
  * Jacobian of the column. The local part (what a cell's primitives owe to its own states, gas flow and pressure) is
  * taken by differences, one cell at a time: some eight evaluations of a cell instead of the dozens of whole right-hand
  * sides that coloured differences would cost. The face part is exact. The plant is differenced through its two halves.
- * Left out: the gas that a growing gas space displaces, and the pressure's target in the gas that a rising pressure
- * keeps back: corrections of the gas flow of some 0.1 %.
+ * Left out: the gas that a growing gas space displaces, a correction of the gas flow of some 0.1 %.
  */
 import type { Case } from '../case/case.ts';
 import { entryIndex, type SparsePattern } from '../numerics/sparse-pattern.ts';
@@ -126,6 +125,10 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     return p;
   });
   /** Positions of outer rows at the flow through a chain's top face: [outer row]. */
+  /** Positions of outer rows at a bed's pressure drop: [outer row]. */
+  const outerDrop = plant.column.beds.map((_, b) =>
+    Int32Array.from({ length: outerSize }, (_unused, i) => at(layout.coreFirst + i, size + layout.firstDrop + b)),
+  );
   const outerTop = chains.map(({ layout: chain }) =>
     Int32Array.from({ length: outerSize }, (_, i) => at(layout.coreFirst + i, size + chain.firstFlow)),
   );
@@ -136,11 +139,12 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   for (let i = 0; i < outerSize; i++) {
     for (let j = 0; j < coreSize; j++) outerCore[i * coreSize + j] = at(layout.coreFirst + i, layout.coreFirst + j);
   }
-  const readers = (chain: number, kind: 'top' | 'bottom' | 'sums' | 'supply' | 'inflow'): number[] =>
+  const readers = (chain: number, kind: 'top' | 'bottom' | 'sums' | 'drops' | 'supply' | 'inflow'): number[] =>
     outerReads.flatMap((reads, i) => (reads[kind].includes(chains[chain].layout.bed) ? [i] : []));
   const topReaders = chains.map((_, i) => readers(i, 'top'));
   const bottomReaders = chains.map((_, i) => readers(i, 'bottom'));
   const sumReaders = chains.map((_, i) => readers(i, 'sums'));
+  const dropReaders = chains.map((_, i) => readers(i, 'drops'));
   const supplyReaders = chains.map((_, i) => readers(i, 'supply'));
   const inflowReaders = chains.map((_, i) => readers(i, 'inflow'));
 
@@ -592,7 +596,11 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       const TL = q[p + index.TL];
       const own = f * M;
       // Rising pressure keeps gas back: n dP/dt / P, with dP/dt = (target - P)/lag.
-      addPressure(values, where.flowPressure, f, chain.bed, (f + 0.5) / N, q[p + index.gasMoles] / (chains[i].pressure(f) * PRESSURE_LAG));
+      const kept = q[p + index.gasMoles] / (chains[i].pressure(f) * PRESSURE_LAG);
+      addPressure(values, where.flowPressure, f, chain.bed, (f + 0.5) / N, kept);
+      const first = size + layout.firstDrop;
+      for (let b = 0; b < chain.bed; b++) values[at(size + chain.firstFlow + f, first + b)] -= kept;
+      values[at(size + chain.firstFlow + f, first + chain.bed)] -= (kept * (f + 0.5)) / N;
       if (isothermal) {
         values[where.flowOwn[f]] -= 1;
         values[where.flowNext[f]] += 1;
@@ -642,6 +650,27 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     for (const below of layout.chains) {
       if (below.bed === chain.bed + 1) values[at(bottom, size + below.firstFlow)] += share;
     }
+  };
+
+  /** Rows of the auxiliary pressure drops: 0 = sum over the zones' cells, by area, less the drop. */
+  const addDropRows = (values: Float64Array): void => {
+    const shares = plant.column.distribution;
+    chains.forEach(({ layout: chain }, i) => {
+      const row = size + layout.firstDrop + chain.bed;
+      if (chain.zone === 0) values[at(row, row)] -= 1;
+      const share = shares === undefined ? 1 : chain.zone === 0 ? shares.areaShare : 1 - shares.areaShare;
+      const L = local[i];
+      for (let c = 0; c < chain.cells; c++) {
+        const from = (c * M + index.pressureDrop) * columns;
+        const b = at(row, chain.first + c * block);
+        for (let s = 0; s < block; s++) values[b + s] += share * L[from + s];
+        values[at(row, size + chain.firstFlow + c + 1)] += share * L[from + FLOW];
+        const p = share * L[from + PRESSURE];
+        values[at(row, layout.topPressure)] += p;
+        for (let j = 0; j < chain.bed; j++) values[at(row, layout.pressureDrop[j])] += p;
+        values[at(row, layout.pressureDrop[chain.bed])] += (p * (c + 0.5)) / chain.cells;
+      }
+    });
   };
 
   const stepOf = (y: Float64Array, column: number): number => STEP * (Math.abs(y[column]) + scales[column]);
@@ -752,6 +781,11 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         }
       }
       if (bottomReaders[i].length > 0) addBottom(t, y, values, i);
+      if (dropReaders[i].length > 0) {
+        // Weighted over the zones the gains add up to one bed's.
+        differencePort(t, y, o, op.pressureDrop, portScale(op.pressureDrop));
+        for (const row of dropReaders[i]) values[outerDrop[at_.bed][row]] += moved[layout.coreFirst + row];
+      }
       if (sumReaders[i].length > 0) {
         const volume = cell.crossSection * cell.height;
         for (const [port, m, factor] of [
@@ -841,6 +875,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         addGasFaces(values, i);
         addFlowRows(values, i);
       }
+      addDropRows(values);
       addOutputs(t, y, values);
     },
   };

@@ -9,10 +9,11 @@ import type { Layout } from './layout.ts';
 
 /** What an outer row reads of the chains. */
 export interface OuterReads {
-  /** Beds whose top outputs, bottom outputs, sums over the bed, top cell's supply, and bottom gas inflow it reads. */
+  /** Beds whose top outputs, bottom outputs, sums over the bed (heat, hold-up), top cell's supply, bottom gas inflow it reads. */
   readonly top: readonly number[];
   readonly bottom: readonly number[];
   readonly sums: readonly number[];
+  /** Beds whose pressure drop it reads. */ readonly drops: readonly number[];
   readonly supply: readonly number[];
   readonly inflow: readonly number[];
 }
@@ -30,7 +31,7 @@ export interface ColumnPattern {
   span(r: number, c: number, cells: number): readonly [number, number];
 }
 
-const NOTHING: OuterReads = { top: [], bottom: [], sums: [], supply: [], inflow: [] };
+const NOTHING: OuterReads = { top: [], bottom: [], sums: [], drops: [], supply: [], inflow: [] };
 
 /** What each outer row (core, then accumulators) reads of the chains. */
 function outerReads(plant: Case, layout: Layout): OuterReads[] {
@@ -49,7 +50,8 @@ function outerReads(plant: Case, layout: Layout): OuterReads[] {
     }
   }
   for (const b of all) {
-    set(layout.pressureDrop[b], { sums: [b] });
+    set(layout.pressureDrop[b], { drops: [b] });
+    // The split reads each zone's own drop.
     if (layout.gasShare[b] >= 0) set(layout.gasShare[b], { sums: [b] });
   }
   for (let k = 0; k <= components; k++) set(layout.sump + k, { bottom: [last] });
@@ -66,6 +68,8 @@ function outerReads(plant: Case, layout: Layout): OuterReads[] {
         set(at, { bottom: [last] });
         break;
       case 'bed-dp':
+        set(at, { drops: all });
+        break;
       case 'holdup':
         set(at, { sums: all });
         break;
@@ -142,6 +146,7 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
       const row = size + firstFlow + c;
       builder.add(row, row + 1);
       for (const column of pressures(bed)) builder.add(row, column);
+      for (let b = 0; b <= bed; b++) builder.add(row, size + layout.firstDrop + b);
       for (let j = Math.max(0, c - 1); j <= Math.min(cells - 1, c + 2); j++) {
         for (let s = 0; s < block; s++) builder.add(row, first + j * block + s);
       }
@@ -153,6 +158,14 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
       if (below.bed === bed + 1) builder.add(row, size + below.firstFlow);
     }
   }
+  for (const chain of layout.chains) {
+    const row = size + layout.firstDrop + chain.bed;
+    for (let c = 0; c < chain.cells; c++) {
+      for (let s = 0; s < block; s++) builder.add(row, chain.first + c * block + s);
+      builder.add(row, size + chain.firstFlow + c + 1);
+    }
+    for (const column of pressures(chain.bed)) builder.add(row, column);
+  }
   const reads = outerReads(plant, layout);
   const leaves = leafStates(plant, layout);
   reads.forEach((what, i) => {
@@ -161,6 +174,7 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
     for (let j = 0; j < layout.coreSize; j++) {
       if (!leaves.has(layout.coreFirst + j)) builder.add(row, layout.coreFirst + j);
     }
+    for (const b of what.drops) builder.add(row, size + layout.firstDrop + b);
     for (const chain of layout.chains) {
       const cell = (c: number): void => {
         for (let s = 0; s < block; s++) builder.add(row, chain.first + c * block + s);

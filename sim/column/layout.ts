@@ -5,7 +5,8 @@
  *
  * A chain is one zone of one bed. A cell holds `block` states in this order (k = 0 solvent, 1..K solutes):
  *   liquid moles n_0..n_K, enthalpy of liquid and packing, gas moles m_0..m_K (solvent vapour, solutes), gas enthalpy.
- * The linear systems carry one auxiliary unknown more for each face of a chain, 0 at the top: the gas flow through it.
+ * The linear systems carry one auxiliary unknown more for each face of a chain, 0 at the top: the gas flow through
+ * it; and one for each bed: its pressure drop.
  */
 import type { Case } from '../case/case.ts';
 
@@ -28,6 +29,7 @@ export interface Layout {
   readonly accumulatorSize: number;
   /** States in all. */ readonly size: number;
   readonly auxiliary: number;
+  /** Auxiliary offset (after all states) of the first bed's pressure drop. */ readonly firstDrop: number;
   /** Core offsets (absolute). Liquid vessel above bed b: n_0..n_K, enthalpy. */
   readonly vessel: readonly number[];
   /** Gas space below bed b - 1 and above bed b (b >= 1): m_0..m_K, enthalpy; -1 for b = 0. */
@@ -67,7 +69,8 @@ export function createLayout(plant: Case): Layout {
       flow += bed.segments + 1;
     }
   });
-  const auxiliary = flow;
+  const firstDrop = flow;
+  const auxiliary = flow + plant.column.beds.length;
   const coreFirst = next;
   const take = (count: number): number => {
     const at = next;
@@ -114,6 +117,7 @@ export function createLayout(plant: Case): Layout {
     accumulatorSize: next - accumulatorFirst,
     size: next,
     auxiliary,
+    firstDrop,
     vessel,
     plenum,
     pressureDrop,
