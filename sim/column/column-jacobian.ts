@@ -2,7 +2,7 @@
  * Jacobian of the column. The local part (what a cell's primitives owe to its own states, gas flow and pressure) is
  * taken by differences, one cell at a time: some eight evaluations of a cell instead of the dozens of whole right-hand
  * sides that coloured differences would cost. The face part is exact. The plant is differenced through its two halves.
- * Left out: the gas that a growing gas space displaces, a correction of the gas flow of some 0.1 %.
+ * Left out: the thermal expansion of the liquid in the gas that a growing gas space takes in.
  */
 import type { Case } from '../case/case.ts';
 import { entryIndex, type SparsePattern } from '../numerics/sparse-pattern.ts';
@@ -47,9 +47,9 @@ interface ChainPositions {
   /** By row: position of the top pressure and of each pressure drop of beds 0..bed. */
   readonly pressure: Int32Array;
   /** Gas rows of the top cell: the flow through the top face. */ readonly topFlow: Int32Array;
-  /** By flow row (face 0..N): own, next, blocks of cells face - 1..face + 2, pressures. */
+  /** By flow row (face 0..N): own; blocks of cells face - 2..face + 2 and the flows into them; pressures. */
   readonly flowOwn: Int32Array;
-  readonly flowNext: Int32Array;
+  readonly flowInto: Int32Array;
   readonly flowBlock: Int32Array;
   readonly flowPressure: Int32Array;
 }
@@ -82,8 +82,8 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     const drops = chain.bed + 2;
     const pressure = new Int32Array(rows * drops);
     const flowOwn = new Int32Array(chain.cells + 1);
-    const flowNext = new Int32Array(chain.cells).fill(-1);
-    const flowBlock = new Int32Array(chain.cells * 4).fill(-1);
+    const flowInto = new Int32Array(chain.cells * 5).fill(-1);
+    const flowBlock = new Int32Array(chain.cells * 5).fill(-1);
     const flowPressure = new Int32Array(chain.cells * drops);
     const topFlow = Int32Array.from({ length: block }, (_, r) => at(chain.first + r, size + chain.firstFlow));
     const pressureColumn = (i: number): number => (i === 0 ? layout.topPressure : layout.pressureDrop[i - 1]);
@@ -99,15 +99,15 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       }
       const row = size + chain.firstFlow + c;
       flowOwn[c] = at(row, row);
-      flowNext[c] = at(row, row + 1);
-      for (let j = Math.max(0, c - 1); j <= Math.min(chain.cells - 1, c + 2); j++) {
-        flowBlock[c * 4 + j - c + 1] = at(row, chain.first + j * block);
+      for (let j = Math.max(0, c - 2); j <= Math.min(chain.cells - 1, c + 2); j++) {
+        flowBlock[c * 5 + j - c + 2] = at(row, chain.first + j * block);
+        flowInto[c * 5 + j - c + 2] = at(row, size + chain.firstFlow + j + 1);
       }
       for (let i = 0; i < drops; i++) flowPressure[c * drops + i] = at(row, pressureColumn(i));
     }
     const bottom = size + chain.firstFlow + chain.cells;
     flowOwn[chain.cells] = at(bottom, bottom);
-    return { block: blockAt, flow: flowAt, pressure, topFlow, flowOwn, flowNext, flowBlock, flowPressure };
+    return { block: blockAt, flow: flowAt, pressure, topFlow, flowOwn, flowInto, flowBlock, flowPressure };
   });
   /** Positions of outer rows in a chain's blocks, -1 where they read nothing: [outer row][cell]. */
   const outerBlock = chains.map(({ layout: chain }) => {
@@ -551,9 +551,9 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     if (factor === 0) return;
     const { layout: chain } = chains[i];
     const where = positions[i];
-    const b = where.flowBlock[f * 4 + j - f + 1];
+    const b = where.flowBlock[f * 5 + j - f + 2];
     for (let s = 0; s < block; s++) values[b + s] += factor * slopes[from + s];
-    if (j === f) values[where.flowNext[f]] += factor * slopes[from + FLOW];
+    values[where.flowInto[f * 5 + j - f + 2]] += factor * slopes[from + FLOW];
     addPressure(values, where.flowPressure, f, chain.bed, (j + 0.5) / chain.cells, factor * slopes[from + PRESSURE]);
   };
   /** Adds factor * d(gas temperature at face g) to the row of face f. */
@@ -571,11 +571,37 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     }
   };
   const addInletTemperature = (values: Float64Array, i: number, f: number, factor: number): void => {
-    const { layout: chain } = chains[i];
-    const row = size + chain.firstFlow + f;
-    for (const column of gasInletColumns[chain.bed]) {
-      const gain = inputCore[i][ip.TG * coreSize + column - layout.coreFirst];
+    addInlet(values, i, f, ip.TG, gasInletColumns[chains[i].layout.bed], factor);
+  };
+  /** Adds factor * d(chain input) to the row of face f. */
+  const addInlet = (values: Float64Array, i: number, f: number, input: number, list: readonly number[], factor: number): void => {
+    const row = size + chains[i].layout.firstFlow + f;
+    for (const column of list) {
+      const gain = inputCore[i][input * coreSize + column - layout.coreFirst];
       if (gain !== 0) values[at(row, column)] += factor * gain;
+    }
+  };
+  /** Adds factor * d(liquid flow through face g) to the row of the gas flow through face f. */
+  const addLiquidFlow = (values: Float64Array, i: number, f: number, g: number, factor: number): void => {
+    const { layout: chain, work } = chains[i];
+    const L = local[i];
+    const q = work.primitives;
+    const offered = work.inputs[ip.liquidFlow];
+    const list = liquidInletColumns[chain.bed];
+    if (g === 0) {
+      if (q[index.supply] <= offered) addToFlowRow(values, i, f, 0, L, index.supply * columns, factor);
+      else addInlet(values, i, f, ip.liquidFlow, list, factor);
+      return;
+    }
+    const value = liquidFace(i, g, index.demand, offered);
+    if (g < chain.cells && q[g * P + index.supply] < value) {
+      addToFlowRow(values, i, f, g, L, (g * M + index.supply) * columns, factor);
+      return;
+    }
+    for (let e = 0; e < 3; e++) {
+      if (slopesOf[e] === 0) continue;
+      if (cells[e] >= 0) addToFlowRow(values, i, f, cells[e], L, (cells[e] * M + index.demand) * columns, factor * slopesOf[e]);
+      else addInlet(values, i, f, ip.liquidFlow, list, factor * slopesOf[e]);
     }
   };
 
@@ -584,7 +610,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
    * slopes act on the small storage term only and are left out, as are those of the mixture's heat capacity.
    */
   const addFlowRows = (values: Float64Array, i: number): void => {
-    const { layout: chain, work } = chains[i];
+    const { layout: chain, work, isPrescribed } = chains[i];
     const L = local[i];
     const where = positions[i];
     const N = chain.cells;
@@ -601,9 +627,19 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       const first = size + layout.firstDrop;
       for (let b = 0; b < chain.bed; b++) values[at(size + chain.firstFlow + f, first + b)] -= kept;
       values[at(size + chain.firstFlow + f, first + chain.bed)] -= (kept * (f + 0.5)) / N;
+      // Liquid that comes takes gas space: n/V times its net flow and what condenses.
+      if (!isPrescribed) {
+        const perVolume = q[p + index.gasMoles] / q[p + index.gasVolume];
+        addLiquidFlow(values, i, f, f, perVolume);
+        addLiquidFlow(values, i, f, f + 1, -perVolume);
+        for (let k = 0; k < components; k++) {
+          const v = k === 0 ? q[p + index.liquidRow] : soluteVolume[k];
+          addToFlowRow(values, i, f, f, L, (own + index.transfer + k) * columns, perVolume * v);
+        }
+      }
       if (isothermal) {
         values[where.flowOwn[f]] -= 1;
-        values[where.flowNext[f]] += 1;
+        values[where.flowInto[f * 5 + 2]] += 1;
         for (let k = 0; k < components; k++) addToFlowRow(values, i, f, f, L, (own + index.transfer + k) * columns, -1);
         continue;
       }
@@ -622,7 +658,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       const Gin = work.flow[f];
       const Gout = f === 0 ? work.topFlow : work.flow[f - 1];
       values[where.flowOwn[f]] -= 1 + perTC * mixOut * (Tout - T);
-      values[where.flowNext[f]] += 1 + perTC * mixIn * (Tin - T);
+      values[where.flowInto[f * 5 + 2]] += 1 + perTC * mixIn * (Tin - T);
       for (let k = 0; k < components; k++) {
         addToFlowRow(values, i, f, f, L, (own + index.transfer + k) * columns, -1 - perTC * vapourHeat[k] * (TL - T));
       }

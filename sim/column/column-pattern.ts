@@ -141,15 +141,18 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
         if (r < liquidRows && c <= 1) for (const column of liquidInletColumns[bed]) builder.add(row, column);
         if (r >= liquidRows && c >= cells - 2) for (const column of gasInletColumns[bed]) builder.add(row, column);
       }
-      // The flow out of the cell: by the flow in, transfer, heat and the temperatures of its two faces.
+      // The flow out of the cell: by the flow in, transfer, heat, the temperatures of its two faces, and the liquid that
+      // comes and goes and so takes or gives gas space.
       for (let r = block - components - 1; r < block; r++) builder.add(first + c * block + r, size + firstFlow + c);
       const row = size + firstFlow + c;
       builder.add(row, row + 1);
       for (const column of pressures(bed)) builder.add(row, column);
       for (let b = 0; b <= bed; b++) builder.add(row, size + layout.firstDrop + b);
-      for (let j = Math.max(0, c - 1); j <= Math.min(cells - 1, c + 2); j++) {
+      for (let j = Math.max(0, c - 2); j <= Math.min(cells - 1, c + 2); j++) {
         for (let s = 0; s < block; s++) builder.add(row, first + j * block + s);
+        builder.add(row, size + firstFlow + j + 1);
       }
+      if (c <= 1) for (const column of liquidInletColumns[bed]) builder.add(row, column);
       if (c >= cells - 2) for (const column of gasInletColumns[bed]) builder.add(row, column);
     }
     const row = size + firstFlow + cells;
