@@ -166,7 +166,8 @@ describe.each(steppers)('$name', (method) => {
       runTo(stepper, 10);
       return stepper;
     });
-    expect(a!.stats).toEqual(b!.stats);
+    // Roundings may tip whether a step size counts as kept, and with it a factorisation; not the steps.
+    expect(a!.stats.steps).toBe(b!.stats.steps);
     expect(Math.abs(a!.y[0]! - b!.y[0]!)).toBeLessThan(1e-14); // roundings of some tens of steps
   });
 
