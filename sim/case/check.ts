@@ -144,7 +144,7 @@ function note(reading: Reading, schema: Schema, root: unknown, path: string, iss
   } else if (issue.kind === 'validation') {
     reading.refuse('range', where, issue.message, issue.input);
   } else {
-    const words = target === undefined ? [] : wordsOf(target);
+    const words = quotedWords(issue.expected);
     if (words.length > 0) {
       const hint = typeof issue.input === 'string' ? suggestion(issue.input, words) : undefined;
       reading.refuse('choice', where, `one of ${words.join(', ')}`, issue.input, hint);
@@ -187,19 +187,11 @@ function nounOf(schema: Schema): string {
   return inside.type === 'string' ? 'text' : `a ${inside.type}`;
 }
 
-/** The words among which a schema chooses; empty when it does not. */
-function wordsOf(schema: Schema): readonly string[] {
-  const inside = schema as unknown as Inside;
-  if (inside.type === 'optional' && inside.wrapped !== undefined) return wordsOf(inside.wrapped);
-  if (inside.type === 'picklist') return (inside.options ?? []).map(String);
-  if (inside.type === 'literal') return [String(inside.literal)];
-  if (inside.type === 'variant') {
-    return (inside.options as readonly Schema[]).map((option) => {
-      const entry = (option as unknown as Inside).entries?.[String(inside.key)];
-      return String((entry as unknown as Inside | undefined)?.literal);
-    });
-  }
-  return [];
+/** The words of a choice as the schema library lists them, `("wet" | "dry")`; empty for anything else. */
+function quotedWords(expected: string | null): readonly string[] {
+  return (expected?.startsWith('(') ?? false) || (expected?.startsWith('"') ?? false)
+    ? [...(expected ?? '').matchAll(/"([^"]*)"/g)].map((match) => match[1] ?? '')
+    : [];
 }
 
 const TYPE_WORDS: Readonly<Record<string, string>> = {
@@ -211,6 +203,8 @@ const TYPE_WORDS: Readonly<Record<string, string>> = {
 };
 
 function phrase(expected: string | null): string {
+  const words = quotedWords(expected);
+  if (words.length > 0) return words.length === 1 ? `"${words.join('')}"` : `one of ${words.join(', ')}`;
   return expected === null ? 'another value' : (TYPE_WORDS[expected] ?? expected);
 }
 

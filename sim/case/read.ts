@@ -26,6 +26,8 @@ import { readCarrier, readSolute, readSolvent } from './resolve/substances.ts';
 import type { TagUse } from './resolve/tags.ts';
 import { checkTags, keyedTags } from './resolve/tags.ts';
 import { readUncertain } from './resolve/uncertainty.ts';
+import type { UncertainText } from './schema/actions.ts';
+import type { SolventText } from './schema/substances.ts';
 import { FORMAT_VERSION, caseSchema } from './schema.ts';
 
 /** Longer texts are refused unread, characters; a large case with typed tables has some 100 000. */
@@ -54,6 +56,12 @@ export function readCase(text: string, options: ReadOptions = {}): ReadResult {
   const value = root === undefined ? undefined : readSections(reading, root);
   if (value !== undefined && reading.issues.length === 0) return { ok: true, value, warnings: reading.warnings };
   return { ok: false, issues: reading.issues, warnings: reading.warnings };
+}
+
+/** Id of the library solvent that a solvent rests on, or its own; the library lists solutes by solvent. */
+function baseOf(solvent: SolventText | undefined): string {
+  if (solvent === undefined || typeof solvent === 'string') return solvent ?? 'water';
+  return solvent.base ?? solvent.id ?? 'own-solvent';
 }
 
 /** The JSON object of a text, or undefined after noting why there is none. */
@@ -127,7 +135,7 @@ function readSections(reading: Reading, root: Record<string, unknown>): Case | u
   const solvent = solventText === undefined ? undefined : readSolvent(reading, solventText);
   const carrier = carrierText === undefined ? undefined : readCarrier(reading, carrierText);
   const solutes = soluteTexts?.map((text, index) =>
-    readSolute(reading, `solutes[${index}]`, text, solvent?.id ?? 'water'),
+    readSolute(reading, `solutes[${index}]`, text, baseOf(solventText)),
   );
   solutes?.forEach((solute, index) => {
     if (solute !== undefined && solutes.findIndex((other) => other?.id === solute.id) < index) {
@@ -324,8 +332,9 @@ function tagUses(plant: Plant, root: Record<string, unknown>): TagUse[] {
   return uses;
 }
 
-function readUncertainty(reading: Reading, texts: Parameters<typeof readUncertain>[2][]): Uncertain[] {
-  const paths = reading.provenance.map(({ path }) => path);
+function readUncertainty(reading: Reading, texts: UncertainText[]): Uncertain[] {
+  // A section with issues leaves no paths behind; a path into it is not to blame then.
+  const paths = reading.issues.length === 0 ? reading.provenance.map(({ path }) => path) : undefined;
   return texts
     .map((text, index) => readUncertain(reading, `uncertainty[${index}]`, text, paths))
     .filter((entry) => entry !== undefined);

@@ -91,7 +91,10 @@ export function parseQuantity(text: unknown, kind: Kind): ParsedQuantity {
   const { number, unit } = splitQuantity(clean);
   if (!Number.isFinite(number)) return refuse('no-number', write);
   const entry = unitEntry(kind, unit);
-  if (entry !== undefined) return { ok: true, value: toSI(number, entry), unit: entry.symbol };
+  if (entry !== undefined) {
+    const value = toSI(number, entry);
+    return Number.isFinite(value) ? { ok: true, value, unit: entry.symbol } : refuse('no-number', write);
+  }
   if (unit === '') return refuse('no-unit', `the unit is missing; ${write}`);
   const special = specialHint(unit, kind);
   if (special !== undefined) return refuse('unknown-unit', special);

@@ -145,6 +145,7 @@ describe('spellings', () => {
     expect(reason('five m', 'length')).toBe('no-number');
     expect(reason('', 'length')).toBe('no-number');
     expect(reason('1e999 m', 'length')).toBe('no-number');
+    expect(reason('1e307 km', 'length')).toBe('no-number');
   });
 
   test('the case of letters matters, and a slip is named', () => {

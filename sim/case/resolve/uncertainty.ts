@@ -9,14 +9,18 @@ import type { UncertainText } from '../schema/actions.ts';
 import { parseQuantity, KINDS } from '../../units.ts';
 import type { Kind } from '../../units.ts';
 
-/** One uncertain input, or undefined after noting why not. `paths`: keys with a number, stated or default. */
+/**
+ * One uncertain input, or undefined after noting why not.
+ *
+ * @param paths - Keys with a value, stated or default; undefined: not known.
+ */
 export function readUncertain(
   reading: Reading,
   path: string,
   given: UncertainText,
-  paths: readonly string[],
+  paths: readonly string[] | undefined,
 ): Uncertain | undefined {
-  if (!paths.includes(given.path)) {
+  if (paths !== undefined && !paths.includes(given.path)) {
     reading.refuse(
       'reference',
       join(path, 'path'),
