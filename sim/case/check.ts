@@ -84,7 +84,10 @@ function branch(schema: Schema, value: unknown): Schema {
     return found ?? schema;
   }
   if (inside.type !== 'union' || options === undefined) return schema;
-  if (Array.isArray(value)) return branch(options.find((o) => has(o, 'array') || has(o, 'tuple')) ?? schema, value);
+  if (Array.isArray(value)) {
+    const list = options.find((option) => has(option, 'array') || has(option, 'tuple'));
+    return list ?? schema;
+  }
   if (!isObject(value)) return schema;
   const objects = options.filter((o) => has(o, 'strict_object') || has(o, 'record') || has(o, 'variant'));
   let best = objects[0];

@@ -9,6 +9,7 @@ import { join } from '../issues.ts';
 import type { Default, Reading } from '../reading.ts';
 import type { ColumnText, PackingText, TransferText } from '../schema/column.ts';
 import { origin } from './origin.ts';
+import { listed } from './listed.ts';
 
 /** The column, or undefined after noting why not. `liquidRate`: design, m3/s. */
 export function readColumn(
@@ -133,7 +134,7 @@ function readMeasuredTransfer(reading: Reading, path: string, text: MeasuredText
 /** A packing, or undefined after noting why not. */
 export function readPacking(reading: Reading, path: string, given: PackingText): Packing | undefined {
   const own: Exclude<PackingText, string> = typeof given === 'string' ? { base: given } : given;
-  const base = own.base === undefined ? undefined : PACKINGS[own.base];
+  const base = listed(PACKINGS, own.base);
   if (own.base !== undefined && base === undefined) {
     reading.unknown(
       typeof given === 'string' ? path : join(path, 'base'),
@@ -202,7 +203,7 @@ function constants<K extends string>(
   path: string,
   names: readonly K[],
   own: { readonly [N in K]?: number | undefined } | undefined,
-  listed:
+  known:
     | {
         readonly value: { readonly [N in K]?: number };
         readonly source: string;
@@ -213,7 +214,7 @@ function constants<K extends string>(
   const out: Partial<Record<K, number>> = {};
   const missing: K[] = [];
   for (const name of names) {
-    const value = own?.[name] ?? listed?.value[name];
+    const value = own?.[name] ?? known?.value[name];
     if (value === undefined) missing.push(name);
     else out[name] = value;
   }
@@ -224,7 +225,7 @@ function constants<K extends string>(
     return undefined;
   }
   if (own !== undefined) reading.stated(path);
-  else if (listed !== undefined) reading.taken(path, listed.source, origin(listed).verified);
+  else if (known !== undefined) reading.taken(path, known.source, origin(known).verified);
   return out as Record<K, number>;
 }
 

@@ -30,11 +30,10 @@ export function readCurve(
 ): Curve | undefined {
   if (typeof given === 'number') return { kind: 'constant', value: given };
   if ('library' in given) {
-    const id = `${given.library}.${property}`;
-    if (libraryCurve(id) !== undefined) return { kind: 'library', id };
     const known = [...Object.keys(SOLVENTS), ...Object.keys(CARRIERS)].filter(
       (name) => libraryCurve(`${name}.${property}`) !== undefined,
     );
+    if (known.includes(given.library)) return { kind: 'library', id: `${given.library}.${property}` };
     reading.unknown(join(path, 'library'), `a library substance with a ${property}`, given.library, known);
     return undefined;
   }

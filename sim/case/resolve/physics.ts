@@ -5,6 +5,7 @@ import { SOLVENTS, heavyOil } from '../../properties/library/solvents.ts';
 import type { Carrier, ColumnSpec, GasSupply, LiquidSupply, Solvent } from '../case.ts';
 import { curveValue } from '../curve.ts';
 import type { Reading } from '../reading.ts';
+import { listed } from './listed.ts';
 
 /** Refuses what the model cannot be: a condensing carrier, a frozen or boiling solvent. */
 export function checkPhases(
@@ -19,11 +20,11 @@ export function checkPhases(
 ): void {
   const { solvent, carrier, column, gas, liquid } = parts;
   const coldest = Math.min(liquid.feed.temperature, gas.feed.temperature);
-  const library = SOLVENTS[solvent.id];
-  const listed = CARRIERS[carrier.id];
+  const library = listed(SOLVENTS, solvent.id);
+  const gasEntry = listed(CARRIERS, carrier.id);
   // An own solvent has no library entry; the oil stands in, for only its name is looked at.
   const refusal =
-    listed === undefined ? undefined : carrierRefusal(listed, library ?? heavyOil, coldest, column.topPressure);
+    gasEntry === undefined ? undefined : carrierRefusal(gasEntry, library ?? heavyOil, coldest, column.topPressure);
   if (refusal !== undefined) {
     const received =
       refusal.kind === 'same-as-solvent'

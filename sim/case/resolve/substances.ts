@@ -13,6 +13,7 @@ import type { CarrierText, SoluteText, SolventText } from '../schema/substances.
 import type { CurveProperty, CurveText } from './curves.ts';
 import { readCurve } from './curves.ts';
 import { readEquilibrium } from './equilibrium.ts';
+import { listed } from './listed.ts';
 import { origin } from './origin.ts';
 
 /** Fuller's volume of an oil's vapour stands for C18H38, 18 x 15.9 + 38 x 2.31 [Fuller1969]. */
@@ -24,7 +25,7 @@ const OIL_VAPOUR_HEAT_CAPACITY = 400;
 export function readSolvent(reading: Reading, given: SolventText): Solvent | undefined {
   const path = 'solvent';
   const own = typeof given === 'string' ? { base: given } : given;
-  const base = own.base === undefined ? undefined : SOLVENTS[own.base];
+  const base = listed(SOLVENTS, own.base);
   if (own.base !== undefined && base === undefined) {
     reading.unknown(
       typeof given === 'string' ? path : join(path, 'base'),
@@ -116,7 +117,7 @@ export function readSolvent(reading: Reading, given: SolventText): Solvent | und
 export function readCarrier(reading: Reading, given: CarrierText): Carrier | undefined {
   const path = 'carrier';
   const own = typeof given === 'string' ? { base: given } : given;
-  const base = own.base === undefined ? undefined : CARRIERS[own.base];
+  const base = listed(CARRIERS, own.base);
   if (own.base !== undefined && base === undefined) {
     reading.unknown(
       typeof given === 'string' ? path : join(path, 'base'),
@@ -161,7 +162,7 @@ export function readCarrier(reading: Reading, given: CarrierText): Carrier | und
 /** One solute, or undefined after noting why not. */
 export function readSolute(reading: Reading, path: string, given: SoluteText, solventId: string): Solute | undefined {
   const own = typeof given === 'string' ? { base: given } : given;
-  const base = own.base === undefined ? undefined : SOLUTES[own.base];
+  const base = listed(SOLUTES, own.base);
   if (own.base !== undefined && base === undefined) {
     reading.unknown(
       typeof given === 'string' ? path : join(path, 'base'),
@@ -232,9 +233,9 @@ function liquidDiffusivityOf(
     return given;
   }
   const inWater = solventId === 'water' ? base?.diffusivityInWater : undefined;
-  const elsewhere = base?.liquidDiffusivity?.[solventId];
-  const listed = inWater ?? elsewhere;
-  const { source, verified } = listed === undefined ? WILKE_CHANG : origin(listed);
+  const elsewhere = listed(base?.liquidDiffusivity ?? {}, solventId);
+  const known = inWater ?? elsewhere;
+  const { source, verified } = known === undefined ? WILKE_CHANG : origin(known);
   reading.taken(key, source, verified);
   if (inWater !== undefined) return { value: inWater.value, temperature: DIFFUSIVITY_TEMPERATURE };
   return elsewhere === undefined ? undefined : { value: elsewhere.value.D, temperature: elsewhere.value.T };
