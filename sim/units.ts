@@ -4,27 +4,17 @@
 declare const unit: unique symbol;
 
 /** A number that carries its unit for the checker and costs nothing at run time. */
-export type Quantity<U extends string> = number & {
+type Quantity<U extends string> = number & {
   /** Phantom; never present at run time. */
   readonly [unit]?: U;
 };
 
 export type Kelvin = Quantity<'K'>;
 export type Pascal = Quantity<'Pa'>;
-export type Metre = Quantity<'m'>;
-export type Second = Quantity<'s'>;
-export type Mole = Quantity<'mol'>;
-export type Kilogram = Quantity<'kg'>;
-export type CubicMetre = Quantity<'m3'>;
-export type MolePerSecond = Quantity<'mol/s'>;
-export type CubicMetrePerSecond = Quantity<'m3/s'>;
-export type KilogramPerSecond = Quantity<'kg/s'>;
 export type KilogramPerMole = Quantity<'kg/mol'>;
-export type MoleFraction = Quantity<'mol/mol'>;
 
-export type { Kind, KindEntry, UnitEntry } from './units/kinds.ts';
+export type { Kind } from './units/kinds.ts';
 export { KINDS, kindsWithUnit, unitEntry, unitsOf } from './units/kinds.ts';
-export type { ParsedQuantity, QuantityIssue } from './units/parse.ts';
 export { normaliseUnit, parseQuantity, splitQuantity } from './units/parse.ts';
 export { formatNumber, formatQuantity, formatTime } from './units/format.ts';
-export { NORMAL_MOLAR_VOLUME, STANDARD_MOLAR_VOLUME } from './units/factors.ts';
+export { NORMAL_MOLAR_VOLUME } from './units/factors.ts';

@@ -1,6 +1,7 @@
 // Curves of a case as numbers: needed here for densities behind mg/L and for what freezes or boils.
 
 import { libraryCurve } from '../properties/library/curves.ts';
+import type { Kelvin } from '../units.ts';
 import type { Curve } from './case.ts';
 
 /**
@@ -9,7 +10,7 @@ import type { Curve } from './case.ts';
  * @param T - Temperature, K; scalar. Points are held flat outside their range.
  * @returns SI value; NaN when a library name is unknown, which a checked case never has.
  */
-export function curveValue(curve: Curve, T: number): number {
+export function curveValue(curve: Curve, T: Kelvin): number {
   if (curve.kind === 'constant') return curve.value;
   if (curve.kind === 'library') return libraryCurve(curve.id)?.(T) ?? Number.NaN;
   const { temperature, value, interpolation } = curve;

@@ -2,7 +2,7 @@
 // stands twice in one object. The platform's parser names neither.
 
 /** Where and why the text stops being JSON. */
-export interface JsonFault {
+interface JsonFault {
   readonly line: number;
   readonly column: number;
   readonly expected: string;
@@ -10,7 +10,7 @@ export interface JsonFault {
 }
 
 /** A key that stands twice in one object; the first value is kept. */
-export interface DuplicateKey {
+interface DuplicateKey {
   readonly path: readonly (string | number)[];
   readonly line: number;
   readonly column: number;

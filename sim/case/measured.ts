@@ -1,7 +1,7 @@
 // Values of measured quantities between text and SI: which kind goes with what is measured, and the
 // strengths that need a molar mass (mg/Nm3, ppmw, mg/L).
 
-import type { Kind } from '../units.ts';
+import type { Kind, KilogramPerMole } from '../units.ts';
 import {
   NORMAL_MOLAR_VOLUME,
   formatNumber,
@@ -15,8 +15,8 @@ import type { Reading } from './reading.ts';
 
 /** What a strength needs to become a mole fraction. */
 export interface StrengthBasis {
-  /** kg/mol */ readonly solute: number;
-  /** kg/mol */ readonly solvent: number;
+  /** kg/mol */ readonly solute: KilogramPerMole;
+  /** kg/mol */ readonly solvent: KilogramPerMole;
   /** kg/m3 of the liquid at its feed temperature; the solute's own part is left out (dilute). */
   readonly density: number;
 }
@@ -87,13 +87,13 @@ function strengthFactor(unit: string, gas: boolean, basis: StrengthBasis): numbe
  *
  *   x = (w/M) / (w/M + (1 - w)/Ms)
  */
-export function moleFromMass(w: number, basis: StrengthBasis): number {
+function moleFromMass(w: number, basis: StrengthBasis): number {
   const n = w / basis.solute;
   return n / (n + (1 - w) / basis.solvent);
 }
 
 /** Mass fraction beside the pure solvent, the inverse of `moleFromMass`. */
-export function massFromMole(x: number, basis: StrengthBasis): number {
+function massFromMole(x: number, basis: StrengthBasis): number {
   const m = x * basis.solute;
   return m / (m + (1 - x) * basis.solvent);
 }

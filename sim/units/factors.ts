@@ -11,19 +11,19 @@ export const POUND = 0.45359237;
 /** m3; US gallon, 231 cubic inches, exact [SP811] appendix B.6 and B.8. */
 export const US_GALLON = 231 * INCH ** 3;
 /** m/s2; exact [SP811] B.8, acceleration of free fall, standard. */
-export const FREE_FALL = 9.80665;
+const FREE_FALL = 9.80665;
 /** Pa; pound-force per square inch, from the exact pound, inch and free fall. */
 export const PSI = (POUND * FREE_FALL) / INCH ** 2;
 /** Pa; exact [SP811] B.8, atmosphere, standard. */
 export const ATMOSPHERE = 101_325;
 /** Pa; conventional millimetre of water, 1000 kg/m3 at standard free fall [SP811] B.8. */
-export const MM_WATER = FREE_FALL;
+export const MM_WATER = 1e-3 * 1000 * FREE_FALL;
 /** Pa; conventional inch of water, from the millimetre; [SP811] B.8 prints 249.0889. */
 export const INCH_WATER = MM_WATER * 25.4;
 /** Pa; conventional millimetre of mercury, 13 595.1 kg/m3; [SP811] B.8 prints 133.3224. */
 export const MM_MERCURY = 13.5951 * FREE_FALL;
 /** J; international table calorie, exact [SP811] B.8. */
-export const CALORIE_IT = 4.1868;
+const CALORIE_IT = 4.1868;
 /** J; thermochemical calorie, exact [SP811] B.8. */
 export const CALORIE_TH = 4.184;
 /** K for one degree Fahrenheit of difference; exact [SP811] B.8. */

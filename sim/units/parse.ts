@@ -5,7 +5,7 @@ import type { Kind, UnitEntry } from './kinds.ts';
 import { KINDS, kindsWithUnit, unitEntry, unitsOf } from './kinds.ts';
 
 /** Why a text is not a quantity of the kind asked for. */
-export interface QuantityIssue {
+interface QuantityIssue {
   /** What would have been right, a noun phrase. */
   readonly expected: string;
   /** How to mend it. */
@@ -111,7 +111,7 @@ export function parseQuantity(text: unknown, kind: Kind): ParsedQuantity {
 }
 
 /** SI value of a number in a unit. */
-export function toSI(number: number, entry: UnitEntry): number {
+function toSI(number: number, entry: UnitEntry): number {
   return (number + entry.offset) * entry.factor;
 }
 

@@ -132,7 +132,7 @@ function readMeasuredTransfer(reading: Reading, path: string, text: MeasuredText
 }
 
 /** A packing, or undefined after noting why not. */
-export function readPacking(reading: Reading, path: string, given: PackingText): Packing | undefined {
+function readPacking(reading: Reading, path: string, given: PackingText): Packing | undefined {
   const own: Exclude<PackingText, string> = typeof given === 'string' ? { base: given } : given;
   const base = listed(PACKINGS, own.base);
   if (own.base !== undefined && base === undefined) {

@@ -208,7 +208,7 @@ function roleOf(action: Action): Step['role'] {
 }
 
 /** An action in words, for steps without a label. */
-export function describe(action: Action): string {
+function describe(action: Action): string {
   switch (action.kind) {
     case 'change': {
       const { how } = action;

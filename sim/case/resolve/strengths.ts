@@ -6,6 +6,7 @@ import { join } from '../issues.ts';
 import type { StrengthBasis } from '../measured.ts';
 import { readStrength } from '../measured.ts';
 import type { Default, Reading } from '../reading.ts';
+import type { Kelvin, Pascal } from '../../units.ts';
 import { parseQuantity } from '../../units.ts';
 
 /** What strengths need to know of the substances. */
@@ -92,8 +93,8 @@ export function readHumidity(
   path: string,
   text: string | undefined,
   solvent: Solvent,
-  T: number,
-  p: number,
+  T: Kelvin,
+  p: Pascal,
   absent: Default<number>,
 ): number | undefined {
   if (text === undefined) return reading.fill(path, undefined, absent);

@@ -217,7 +217,7 @@ export function readSolute(reading: Reading, path: string, given: SoluteText, so
 
 /** K at which the library lists diffusivities in water. */
 const DIFFUSIVITY_TEMPERATURE = 298.15;
-const WILKE_CHANG = { source: '[Wilke1955]', verified: 'seen' } as const;
+const WILKE_CHANG = { source: '[Wilke1955]', verified: 'from memory' } as const;
 
 function liquidDiffusivityOf(
   reading: Reading,

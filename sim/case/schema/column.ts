@@ -10,7 +10,7 @@ const SHARE: Range = { min: 0, max: 1 };
 const FACTOR: Range = { above: 0, max: 100 };
 
 /** An own packing, or what replaces a library one's. */
-export const packingEntries = {
+const packingEntries = {
   base: maybe(text('the library packing that the numbers here replace', 'PR-MET-35')),
   id: maybe(text('a short name')),
   shape: maybe(text('a generic shape, such as "Pall ring"')),

@@ -7,7 +7,7 @@ import { choice, count, group, maybe, quantity, tag, text, textOrNumber } from '
 import type { Range } from './primitives.ts';
 
 /** Everything that can be measured or limited. */
-export const MEASURED = [
+const MEASURED = [
   'gas-outlet',
   'gas-inlet',
   'liquid-outlet',

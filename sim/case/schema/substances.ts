@@ -21,7 +21,7 @@ function curve(kind: Kind, description: string) {
 }
 
 /** An own solvent, or what replaces a library one's. */
-export const solventEntries = {
+const solventEntries = {
   base: maybe(text('the library solvent that the numbers here replace', 'water')),
   id: maybe(text('a short name')),
   name: maybe(text('a name for people')),
@@ -37,7 +37,7 @@ export const solventEntries = {
 };
 
 /** An own carrier, or what replaces a library one's. */
-export const carrierEntries = {
+const carrierEntries = {
   base: maybe(text('the library carrier that the numbers here replace', 'air')),
   id: maybe(text('a short name')),
   name: maybe(text('a name for people')),
@@ -95,7 +95,7 @@ export const equilibrium = v.variant('model', [
 ]);
 
 /** An own solute, or what replaces a library one's. */
-export const soluteEntries = {
+const soluteEntries = {
   base: maybe(text('the library solute that the numbers here replace', 'acetone')),
   id: maybe(text('a short name; the composition uses it')),
   name: maybe(text('a name for people')),
