@@ -3,6 +3,7 @@
  * evaluated at the state.
  */
 import type { Case } from '../case/case.ts';
+import type { Chain } from '../column/chain.ts';
 import type { Column } from '../column/column.ts';
 import { GAS_CONSTANT } from '../properties/constants.ts';
 import { billetFloodVelocity } from '../transfer/billet-limits.ts';
@@ -18,6 +19,7 @@ export type QuantityKind =
   | 'temperature'
   | 'length'
   | 'volume'
+  | 'velocity'
   | 'fraction';
 
 /** A quantity that is written down. */
@@ -80,6 +82,7 @@ export function createObserver(column: Column): Observer {
     }
     return sum / flow;
   });
+  add('gas-inlet.moisture', 'solvent vapour in the gas feed', 'fraction', 'mol/mol', () => machinery.flows.feedY[0]);
   add('stack-flow', 'gas at the stack', 'molar-flow', 'mol/s', () => {
     let sum = 0;
     for (const chain of top) sum += chain.work.outputs[op.gasFlow];
@@ -113,6 +116,23 @@ export function createObserver(column: Column): Observer {
     }
     return worst;
   });
+  watchedCells(column).forEach(({ place, chain, cell }) => {
+    const at = cell * index.size;
+    add(`liquid-load.${place}`, `superficial liquid velocity, ${place} segment`, 'velocity', 'm/s', () => chain.work.primitives[at + index.demand] / chain.cell.crossSection);
+    add(`liquid-temperature.${place}`, `liquid temperature, ${place} segment`, 'temperature', 'K', () => chain.work.primitives[at + index.TL]);
+    add(`gas-temperature.${place}`, `gas temperature, ${place} segment`, 'temperature', 'K', () => chain.work.primitives[at + index.TG]);
+  });
+  solutes.forEach((solute, k) => {
+    add(`liquid-strength-highest.${solute.id}`, `${solute.name} in the liquid, strongest segment`, 'liquid-strength', 'mol/mol', () => {
+      let most = 0;
+      for (const zones of column.chains) {
+        for (const chain of zones) {
+          for (let c = 0; c < chain.layout.cells; c++) most = Math.max(most, chain.work.primitives[c * index.size + index.x + k + 1]);
+        }
+      }
+      return most;
+    }, k);
+  });
   const byId = new Map(quantities.map((q, i) => [q.id, i]));
   return {
     quantities,
@@ -123,14 +143,22 @@ export function createObserver(column: Column): Observer {
   };
 }
 
-/**
- * Gas velocity over the flooding velocity at the local liquid rate, in the most loaded segment: Stichlmair's flood
- * condition, or Billet and Schultes' where that hydraulics is chosen; NaN where the law has no flooding.
- */
+/** A place in the packing that is looked at on the way. */
+export type WatchedPlace = 'top' | 'middle' | 'bottom';
+
+/** Segments at which loads and temperatures are written down: of the first zone, counted over all beds. */
+export function watchedCells(column: Column): { readonly place: WatchedPlace; readonly chain: Chain; readonly cell: number }[] {
+  const all = column.chains.flatMap(([chain]) => Array.from({ length: chain.layout.cells }, (_, cell) => ({ chain, cell })));
+  return [
+    { place: 'top', ...all[0] },
+    { place: 'middle', ...all[all.length >> 1] },
+    { place: 'bottom', ...all[all.length - 1] },
+  ];
+}
+
+/** Gas velocity over the flooding velocity in the most loaded segment; see `segmentFloodApproach`. */
 export function floodApproach(column: Column): number {
-  const { plant, index, fluids } = column;
-  const { model } = plant.column.hydraulics;
-  if (model !== 'stichlmair-bravo-fair' && model !== 'billet-schultes') return Number.NaN;
+  const { index } = column;
   let worst = -1;
   let chainOf = column.chains[0][0];
   let cellOf = 0;
@@ -146,6 +174,17 @@ export function floodApproach(column: Column): number {
       }
     }
   }
+  return segmentFloodApproach(column, chainOf, cellOf);
+}
+
+/**
+ * Gas velocity over the flooding velocity at the local liquid rate in a segment: Stichlmair's flood condition, or Billet
+ * and Schultes' where that hydraulics is chosen; NaN where the law has no flooding.
+ */
+export function segmentFloodApproach(column: Column, chainOf: Chain, cellOf: number): number {
+  const { plant, index, fluids } = column;
+  const { model } = plant.column.hydraulics;
+  if (model !== 'stichlmair-bravo-fair' && model !== 'billet-schultes') return Number.NaN;
   const q = chainOf.work.primitives;
   const o = cellOf * index.size;
   const TL = q[o + index.TL];

@@ -15,6 +15,7 @@ import { fitDuct, initialState } from './initial-state.ts';
 import { createColumnStepper, isMethod, METHODS } from './integrators.ts';
 import { createLogic, type Logic, type LogicState } from './logic.ts';
 import { createObserver } from './observation.ts';
+import { profileOf, type Profile } from './profiles.ts';
 import { createPrograms, type Program, type Programs } from './programs.ts';
 import { createRecorder, type RecordState, type Recorder } from './recorder.ts';
 import { createSignals, type Signals, type SignalsState } from './signals.ts';
@@ -46,6 +47,7 @@ export interface SavedRun {
   readonly record: RecordState;
   readonly events: readonly RunEvent[];
   readonly interventions: readonly Intervention[];
+  readonly profiles: readonly Profile[];
   readonly ductResistance: number;
   readonly initialState: readonly number[];
   readonly pieceStart: number;
@@ -65,13 +67,16 @@ export interface Run {
   readonly recorder: Recorder;
   readonly events: readonly RunEvent[];
   readonly interventions: readonly Intervention[];
+  /** Profiles taken so far, in order of time. */ readonly profiles: readonly Profile[];
   readonly outcome: RunOutcome;
   readonly time: number;
   readonly stats: Readonly<StepperStats>;
   /** State at the start, and now. */ readonly initial: Float64Array;
   readonly state: Float64Array;
-  /** Goes on to time `to` (or the scenario's end, or a failure). */
-  advance(to: number): RunOutcome;
+  /** Goes on to time `to` (or the scenario's end, or a failure); `onStep` hears of each step, and changes nothing. */
+  advance(to: number, onStep?: (t: number) => void): RunOutcome;
+  /** Asks for profiles at these times, s, those still ahead (or now); steps stay as they are. */
+  takeProfiles(times: readonly number[]): void;
   /** Carries actions out now, as an operator or a trainer does. */
   act(actions: readonly Action[], role: 'upset' | 'action', text: string): void;
   save(): SavedRun;
@@ -122,6 +127,8 @@ class RunCore implements Run {
   readonly recorder: Recorder;
   readonly events: RunEvent[] = [];
   readonly interventions: Intervention[] = [];
+  readonly profiles: Profile[] = [];
+  #profileTimes: number[] = [];
   readonly initial: Float64Array;
   outcome: RunOutcome = { kind: 'running' };
   readonly #signals: Signals;
@@ -207,9 +214,27 @@ class RunCore implements Run {
     this.#happen(0);
   }
 
-  advance(to: number): RunOutcome {
+  takeProfiles(times: readonly number[]): void {
+    this.#profileTimes = times.filter((t) => t >= this.time).sort((a, b) => a - b);
+    this.#takeProfiles(this.time);
+  }
+
+  /** Takes the profiles that are due up to `to`, a time of the last step. */
+  #takeProfiles(to: number): void {
+    while (this.#profileTimes.length > 0 && this.#profileTimes[0] <= to) {
+      const t = this.#profileTimes.shift() ?? to;
+      if (this.profiles.some((p) => p.time === t)) continue; // taken before the run was saved
+      this.#evaluateAt(t);
+      this.profiles.push(profileOf(this.column, t));
+    }
+  }
+
+  advance(to: number, onStep?: (t: number) => void): RunOutcome {
     const end = Math.min(to, this.scenario.duration);
-    while (this.outcome.kind === 'running' && this.time < end) this.#step(end);
+    while (this.outcome.kind === 'running' && this.time < end) {
+      this.#step(end);
+      onStep?.(this.time);
+    }
     if (this.outcome.kind === 'running' && this.time >= this.scenario.duration) this.outcome = { kind: 'completed' };
     return this.outcome;
   }
@@ -461,6 +486,7 @@ class RunCore implements Run {
   /** Records the ends of steps, and points between so that no gap is longer than asked. */
   #recordBetween(from: number, to: number): void {
     const every = this.plant.run.recordEvery;
+    this.#takeProfiles(to);
     while (this.#nextRecord < to) {
       if (this.#nextRecord > from) {
         const y = this.#evaluateAt(this.#nextRecord);
@@ -491,6 +517,7 @@ class RunCore implements Run {
       record: this.recorder.save(),
       events: this.events,
       interventions: this.interventions,
+      profiles: this.profiles,
       ductResistance: machinery.ductResistance,
       initialState: Array.from(this.initial),
       pieceStart: this.#pieceStart,
@@ -515,6 +542,7 @@ class RunCore implements Run {
     this.recorder.restore(saved.record);
     this.events.push(...saved.events);
     this.interventions.push(...saved.interventions);
+    this.profiles.push(...saved.profiles);
     this.initial.set(saved.initialState);
     this.#nextRecord = saved.nextRecord;
     this.outcome = saved.outcome;
