@@ -2,3 +2,33 @@
 
 export { SimError } from './errors.ts';
 export type { SimFault } from './errors.ts';
+
+export { formatNumber, formatQuantity, formatTime, parseQuantity } from './units.ts';
+
+export { LONGEST_TEXT, readCase } from './case/read.ts';
+export type { ReadOptions, ReadResult } from './case/read.ts';
+export { issueSentence } from './case/issues.ts';
+export type { Issue, IssueKind } from './case/issues.ts';
+export type { Action, Case, Instrument, Limit, Scenario } from './case/case.ts';
+
+export { createRun } from './run/simulate.ts';
+export type { Run, RunFailure, RunOutcome, SavedRun } from './run/simulate.ts';
+export { METHODS } from './run/integrators.ts';
+export type { RunEvent, EventKind } from './run/events.ts';
+export type { Observed, QuantityKind } from './run/observation.ts';
+export type { BedProfile, Profile, ProfileRow } from './run/profiles.ts';
+
+export { caseHash, resultOf, writeResult } from './run/result.ts';
+export type { ResultExtras } from './run/result.ts';
+export { resultSchema } from './run/result-schema.ts';
+export type { Answers, LimitAnswer, ResultDocument, SetpointCrossing } from './run/result-schema.ts';
+export { writeCsv } from './run/result-csv.ts';
+export { CAUTION, measuredSentence } from './run/sentence.ts';
+export { headlineFigures, headlineLimit } from './run/answers.ts';
+export { measuredText, normalMassText, quantityText } from './run/quantity-text.ts';
+export type { UnitSystem } from './run/quantity-text.ts';
+export { choicesOf, readSaved, writeSaved } from './run/saved-file.ts';
+export type { RunChoices, SavedFile } from './run/saved-file.ts';
+export { steadyAnswers, steadyScenario } from './run/steady-answers.ts';
+export type { SteadyAnswer } from './run/steady-answers.ts';
+export { VERSION } from './run/version.ts';

@@ -43,7 +43,7 @@ const KIND_OF: Readonly<Record<Measured['quantity'], MeasuredKind>> = {
   'liquid-outlet-temperature': 'temperature',
   'distributor-volume': 'volume',
   'flood-approach': 'fraction',
-  'carry-over': 'mass-flow',
+  'carry-over': 'volume-flow',
   'pump-speed': 'fraction',
   'make-up-flow': 'volume-flow',
   'bleed-flow': 'volume-flow',
