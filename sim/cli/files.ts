@@ -46,12 +46,16 @@ export function writeText(path: string, text: string, inputs: readonly string[])
   const target = real(path);
   const input = inputs.find((other) => real(other) === target);
   if (input !== undefined) {
-    throw new BadInput([{ path, expected: 'a file other than the input', received: input, severity: 'error', kind: 'contradiction' }]);
+    throw new BadInput([
+      { path, expected: 'a file other than the input', received: input, severity: 'error', kind: 'contradiction' },
+    ]);
   }
   try {
     writeFileSync(path, text);
   } catch (error) {
-    throw new BadInput([{ path, expected: 'a file that can be written', received: reason(error), severity: 'error', kind: 'reference' }]);
+    throw new BadInput([
+      { path, expected: 'a file that can be written', received: reason(error), severity: 'error', kind: 'reference' },
+    ]);
   }
 }
 

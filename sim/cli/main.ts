@@ -25,7 +25,9 @@ Exit status: 0 done; 1 it ran, but the balance does not close or a limit asked t
 
 function program(finish: (code: number) => void): Command {
   const root = new Command('bedwave')
-    .description('Upsets of packed absorbers, scrubbers and strippers: what the outlet does, and how long there is to act')
+    .description(
+      'Upsets of packed absorbers, scrubbers and strippers: what the outlet does, and how long there is to act',
+    )
     .version(VERSION)
     .addHelpText('after', EXAMPLES);
   // Commands made from here on inherit these.
@@ -36,7 +38,9 @@ function program(finish: (code: number) => void): Command {
   addOptions(run, ['scenario', 'list', 'until', 'hold', 'json', 'csv', 'units', 'profiles']);
   addOptions(run, ['save', 'resume', 'segments', 'tolerance', 'method', 'noise', 'seed']);
   run.action((path: string, options: Options) => finish(runCommand(path, options)));
-  const steady = root.command('steady <case>').description('the steady state: outlet, flooding, wetting, transfer units, profile');
+  const steady = root
+    .command('steady <case>')
+    .description('the steady state: outlet, flooding, wetting, transfer units, profile');
   addOptions(steady, ['json', 'units', 'segments']);
   steady.action((path: string, options: Options) => finish(steadyCommand(path, options)));
   root

@@ -51,7 +51,11 @@ const OPTIONS = {
   segments: { flags: '--segments <n>', help: 'segments of each bed', read: (t) => whole('--segments', t, ...SEGMENTS) },
   tolerance: { flags: '--tolerance <number>', help: 'relative tolerance of the integration', read: tolerance },
   method: { flags: '--method <name>', help: 'integrator', choices: METHODS },
-  profiles: { flags: '--profiles <times>', help: 'profiles along the depth at these times, such as "0 s, 60 s, 2 min"', read: times },
+  profiles: {
+    flags: '--profiles <times>',
+    help: 'profiles along the depth at these times, such as "0 s, 60 s, 2 min"',
+    read: times,
+  },
   save: { flags: '--save <time> <file>', help: 'save the run at a time, to be resumed later', read: saving },
   resume: { flags: '--resume <file>', help: 'go on with a saved run of the same case' },
   secondOpinion: { flags: '--second-opinion', help: 'the same run by an independent integrator; takes long' },
@@ -63,7 +67,12 @@ const OPTIONS = {
     help: 'exit with 1 if this limit is not kept (repeatable; "all")',
     read: (t, before) => [...((before as string[] | undefined) ?? []), t],
   },
-  units: { flags: '--units <system>', help: 'units of the printed answer: as the case states limits and instruments, SI elsewhere; or one system', choices: ['case', 'si', 'us'], default: 'case' },
+  units: {
+    flags: '--units <system>',
+    help: 'units of the printed answer: as the case states limits and instruments, SI elsewhere; or one system',
+    choices: ['case', 'si', 'us'],
+    default: 'case',
+  },
 } as const satisfies Record<string, OptionEntry>;
 
 /** Name of an option. */

@@ -70,7 +70,7 @@ function limitRows({ plant, result, units, ink }: ReportParts): string[][] {
     if (limit === undefined) continue;
     const text = (value: number): string => measuredText(plant, limit, value, units);
     const [shown] = answer.shown;
-    const end = shown?.atRangeEnd === true ? ' (range end)' : '';
+    const end = shown !== undefined && shown.atRangeEnd ? ' (range end)' : '';
     const isJudge = answer.average === null;
     rows.push([
       answer.label,
@@ -123,7 +123,12 @@ function instantRows({ plant, result, units }: ReportParts): string[][] {
   const rows = [['', 'true value', 'shown value', 'acts']];
   const put = (tag: string, setpoint: SetpointCrossing, act: string): void => {
     if (setpoint.trueCrossing === null && setpoint.shownCrossing === null) return;
-    rows.push([`${tag} (${setpointText(plant, setpoint, units)})`, at(setpoint.trueCrossing), at(setpoint.shownCrossing), act]);
+    rows.push([
+      `${tag} (${setpointText(plant, setpoint, units)})`,
+      at(setpoint.trueCrossing),
+      at(setpoint.shownCrossing),
+      act,
+    ]);
   };
   for (const { tag, setpoint, annunciations } of answers.instants.alarms) put(tag, setpoint, at(annunciations[0]));
   for (const { tag, inService, conditions, acts } of answers.instants.interlocks) {
@@ -133,7 +138,8 @@ function instantRows({ plant, result, units }: ReportParts): string[][] {
     const limit = plant.limits.find((l) => l.id === answer.id);
     const { first } = answer.average?.over ?? answer.over;
     if (limit === undefined || first === null) continue;
-    const what = answer.average === null ? answer.label : `${formatTime(answer.averaging.window ?? 0)} average, ${answer.label}`;
+    const what =
+      answer.average === null ? answer.label : `${formatTime(answer.averaging.window ?? 0)} average, ${answer.label}`;
     rows.push([`limit ${measuredText(plant, limit, limit.value, units)} (${what})`, at(first), '', '']);
   }
   return rows;
@@ -150,7 +156,12 @@ function commandRows({ plant, result, units }: ReportParts): string[][] {
   const rows = [['at', 'command', 'worst after it', '']];
   for (const { time, text, by, peakAfter } of result.answers.instants.commands) {
     if (by === 'upset' || limit === undefined || peakAfter === null) continue;
-    rows.push([clock(time), text, measuredText(plant, limit, peakAfter.value, units), `${formatTime(peakAfter.time - time)} later`]);
+    rows.push([
+      clock(time),
+      text,
+      measuredText(plant, limit, peakAfter.value, units),
+      `${formatTime(peakAfter.time - time)} later`,
+    ]);
   }
   return rows;
 }
@@ -171,7 +182,10 @@ function amountRows({ plant, result, units }: ReportParts): string[][] {
   }
   rows.push(['liquid carried over', quantityText(answers.carriedOver, 'volume', units)]);
   for (const answer of answers.limits) {
-    const label = answers.limits.filter((l) => l.label === answer.label).length > 1 ? `${answer.label} (${answer.id})` : answer.label;
+    const label =
+      answers.limits.filter((l) => l.label === answer.label).length > 1
+        ? `${answer.label} (${answer.id})`
+        : answer.label;
     rows.push([`recovery, ${label}`, recoveryText(answer)]);
   }
   return rows;
@@ -204,16 +218,29 @@ function eventRows({ events, answers }: ResultDocument): string[][] {
 function checkRows({ result, ink }: ReportParts): string[][] {
   const { closure, statistics: s, settings, secondOpinion, outcome } = result;
   const worst = closure.worst === null ? 'none' : formatNumber(closure.worst, 2);
-  const state = closure.ok ? (closure.worst !== null && closure.worst <= closure.target ? 'closed' : 'above target') : ink.bad('BROKEN');
+  const state = closure.ok
+    ? closure.worst !== null && closure.worst <= closure.target
+      ? 'closed'
+      : 'above target'
+    : ink.bad('BROKEN');
   const rows = [
     ['', ''],
-    ['balance', `${state}, worst error ${worst} (target ${formatNumber(closure.target, 2)}, broken above ${formatNumber(closure.limit, 2)})`],
-    ['solver', `${settings.method}, tolerance ${formatNumber(settings.rtol, 2)}: ${s.steps} steps, ${s.rejected} tried again, ${s.rightHandSides} right-hand sides`],
+    [
+      'balance',
+      `${state}, worst error ${worst} (target ${formatNumber(closure.target, 2)}, broken above ${formatNumber(closure.limit, 2)})`,
+    ],
+    [
+      'solver',
+      `${settings.method}, tolerance ${formatNumber(settings.rtol, 2)}: ${s.steps} steps, ${s.rejected} tried again, ${s.rightHandSides} right-hand sides`,
+    ],
     ['segments', settings.segments.join(' + ')],
   ];
   if (outcome.failure !== null) rows.push(['stopped', ink.bad(outcome.failure.text)]);
   if (secondOpinion !== null) {
-    const within = secondOpinion.agreesWithin === null ? secondOpinion.note : `agrees within ${formatNumber(secondOpinion.agreesWithin, 2)} of each signal's span`;
+    const within =
+      secondOpinion.agreesWithin === null
+        ? secondOpinion.note
+        : `agrees within ${formatNumber(secondOpinion.agreesWithin, 2)} of each signal's span`;
     rows.push(['second opinion', `${secondOpinion.method}: ${within}`]);
   }
   return rows;
@@ -238,8 +265,13 @@ function warningLines({ warnings }: ResultDocument): string[] {
   if (warnings.length === 0) return [];
   return [
     'Warnings',
-    ...warnings.flatMap(({ time, text }) =>
-      wrapped(`${time === null ? '' : `${clock(time)}  `}${text}`, WIDTH - 2, '  ').map((line) => `  ${line}`),
-    ),
+    ...warnings.flatMap(({ kind, time, text }) => {
+      // The list of remembered values is long; the document has it with the sources.
+      const said =
+        kind === 'from-memory'
+          ? `${text.slice(0, text.indexOf(':'))} (the result document lists them under assumptions)`
+          : text;
+      return wrapped(`${time === null ? '' : `${clock(time)}  `}${said}`, WIDTH - 2, '  ').map((line) => `  ${line}`);
+    }),
   ];
 }

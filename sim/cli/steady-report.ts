@@ -64,7 +64,12 @@ function limitRows({ plant, answer, units, ink }: SteadyParts): string[][] {
     const limit = plant.limits.find((l) => l.id === id);
     if (limit === undefined) continue;
     const text = (v: number): string => measuredText(plant, limit, v, units);
-    rows.push([id, `${limit.kind === 'max' ? '<=' : '>='} ${text(bound)}`, text(value), kept ? 'kept' : ink.bad('NOT KEPT')]);
+    rows.push([
+      id,
+      `${limit.kind === 'max' ? '<=' : '>='} ${text(bound)}`,
+      text(value),
+      kept ? 'kept' : ink.bad('NOT KEPT'),
+    ]);
   }
   return rows;
 }
@@ -72,15 +77,27 @@ function limitRows({ plant, answer, units, ink }: SteadyParts): string[][] {
 function loadRows({ answer, units }: SteadyParts): string[][] {
   const rows = [['', '']];
   const { floodApproach, beds } = answer;
-  rows.push(['gas velocity over flooding velocity, worst segment', floodApproach === null ? 'the law has no flooding' : quantityText(floodApproach, 'fraction', units)]);
+  rows.push([
+    'gas velocity over flooding velocity, worst segment',
+    floodApproach === null ? 'the law has no flooding' : quantityText(floodApproach, 'fraction', units),
+  ]);
   for (const bed of beds) {
     const of = beds.length > 1 ? `, bed ${bed.bed}` : '';
-    const flood = bed.floodGradient === null ? 'no packing factor to judge it by' : `${quantityText(bed.worstGradient / bed.floodGradient, 'fraction', units)} of ${quantityText(bed.floodGradient, 'pressure-gradient', units)} at flooding by the packing factor`;
+    const flood =
+      bed.floodGradient === null
+        ? 'no packing factor to judge it by'
+        : `${quantityText(bed.worstGradient / bed.floodGradient, 'fraction', units)} of ${quantityText(bed.floodGradient, 'pressure-gradient', units)} at flooding by the packing factor`;
     const wet = bed.liquidVelocity / bed.wettingVelocity;
     rows.push(
-      [`pressure drop${of}`, `${quantityText(bed.pressureDrop, 'pressure-difference', units)}, ${quantityText(bed.gradient, 'pressure-gradient', units)} mean`],
+      [
+        `pressure drop${of}`,
+        `${quantityText(bed.pressureDrop, 'pressure-difference', units)}, ${quantityText(bed.gradient, 'pressure-gradient', units)} mean`,
+      ],
       [`worst pressure gradient${of}`, `${quantityText(bed.worstGradient, 'pressure-gradient', units)}, ${flood}`],
-      [`liquid load${of}`, `${quantityText(bed.liquidVelocity, 'velocity', units)}, ${formatNumber(wet, 3)} x the least that wets (${quantityText(bed.wettingVelocity, 'velocity', units)})${wet < 1 ? ': TOO LITTLE' : ''}`],
+      [
+        `liquid load${of}`,
+        `${quantityText(bed.liquidVelocity, 'velocity', units)}, ${formatNumber(wet, 3)} x the least that wets (${quantityText(bed.wettingVelocity, 'velocity', units)})${wet < 1 ? ': TOO LITTLE' : ''}`,
+      ],
       [`hold-up${of}`, quantityText(bed.holdup, 'fraction', units)],
     );
   }
@@ -106,9 +123,21 @@ function transferRows({ plant, answer, units }: SteadyParts): string[][] {
 /** Evenly spaced segments, the first and the last among them. */
 function profileRows({ plant, units }: SteadyParts, rows: readonly ProfileRow[]): string[][] {
   const count = Math.min(PROFILE_ROWS, rows.length);
-  const picked = Array.from({ length: count }, (_, i) => rows[Math.round((i * (rows.length - 1)) / Math.max(1, count - 1))]);
+  const picked = Array.from(
+    { length: count },
+    (_, i) => rows[Math.round((i * (rows.length - 1)) / Math.max(1, count - 1))],
+  );
   return [
-    ['segment', 'depth', 'T liquid', 'T gas', 'hold-up', 'dp', 'of flood', ...plant.solutes.flatMap((s) => [`${s.id} gas`, `${s.id} liquid`])],
+    [
+      'segment',
+      'depth',
+      'T liquid',
+      'T gas',
+      'hold-up',
+      'dp',
+      'of flood',
+      ...plant.solutes.flatMap((s) => [`${s.id} gas`, `${s.id} liquid`]),
+    ],
     ...picked
       .filter((row) => row !== undefined)
       .map((row) => [

@@ -60,7 +60,10 @@ export function headlineLimit(limits: readonly LimitAnswer[]): LimitAnswer | und
   const outlet = limits.filter((l) => l.quantity.startsWith('gas-outlet.'));
   const among = outlet.length > 0 ? outlet : limits;
   const rank = (l: LimitAnswer): number => (l.kept ? 0 : 1e6) + severity(l);
-  return among.reduce<LimitAnswer | undefined>((best, l) => (best === undefined || rank(l) > rank(best) ? l : best), undefined);
+  return among.reduce<LimitAnswer | undefined>(
+    (best, l) => (best === undefined || rank(l) > rank(best) ? l : best),
+    undefined,
+  );
 }
 
 /** Worst judged value over the limit, or the limit over it. */

@@ -17,7 +17,7 @@ export interface RollingAverage {
   readonly time: readonly number[];
   readonly value: readonly number[];
   /** Share of valid data in the window, 0..1. */ readonly validShare: readonly number[];
-  at(t: number): number;
+  /** At any time of the record. */ readonly at: (t: number) => number;
 }
 
 /** One block of a block average. */
@@ -31,7 +31,10 @@ export interface BlockAverage {
 }
 
 /** Mean over any window, and its share of valid data. */
-function windowMean(trace: Trace, bad: readonly Interval[]): (from: number, to: number) => { mean: number; share: number } {
+function windowMean(
+  trace: Trace,
+  bad: readonly Interval[],
+): (from: number, to: number) => { mean: number; share: number } {
   const integral = runningIntegral(trace);
   return (from, to) => {
     let sum = integral(to) - integral(from);

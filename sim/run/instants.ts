@@ -4,7 +4,13 @@
  */
 import type { Condition } from '../case/case.ts';
 import { intervalsBeyond, peakOf, type Side } from './piecewise.ts';
-import type { AlarmInstants, CommandInstant, InterlockInstants, LimitAnswer, SetpointCrossing } from './result-schema.ts';
+import type {
+  AlarmInstants,
+  CommandInstant,
+  InterlockInstants,
+  LimitAnswer,
+  SetpointCrossing,
+} from './result-schema.ts';
 import { instrumentTrace, milligramsPerNormal, onBasis, traceOf, type RunRecord } from './run-record.ts';
 
 /** Slack with which a recorded crossing counts as not later than the act it led to, s. */

@@ -102,7 +102,10 @@ function averageOf(
   const side: Side = limit.kind === 'max' ? 'above' : 'below';
   const rolling = rollingAverage(trace, averaging.window, bad);
   const top = averagePeak(rolling, side);
-  const rest = { invalidTime: invalidTime(rolling), leastValidShare: rolling.validShare.reduce((a, b) => Math.min(a, b), 1) };
+  const rest = {
+    invalidTime: invalidTime(rolling),
+    leastValidShare: rolling.validShare.reduce((a, b) => Math.min(a, b), 1),
+  };
   if (averaging.kind === 'rolling') {
     const over = exceedanceOf(averageIntervals(rolling, limit.value, side));
     return { peak: top === undefined ? null : point(top), over, blocks: null, worstAlignment: null, ...rest };
@@ -132,12 +135,7 @@ function worstBlock(blocks: readonly BlockAverage[], side: Side): BlockAverage |
 }
 
 /** The same figures from what the control room sees; dry gas by the true moisture. */
-function shownAnswers(
-  record: RunRecord,
-  limit: Limit,
-  side: Side,
-  point: (p: Peak) => Point,
-): LimitAnswer['shown'] {
+function shownAnswers(record: RunRecord, limit: Limit, side: Side, point: (p: Peak) => Point): LimitAnswer['shown'] {
   return record.plant.instruments.flatMap((instrument, i) => {
     if (!isSameQuantity(instrument.measured, limit.measured)) return [];
     const raw = instrumentTrace(record, i, 'shown');

@@ -17,6 +17,8 @@ export const HENRY_LIMIT = 0.01;
 const FLOOD = 1;
 /** Least velocity over that of the design rate with which a segment counts as drained. */
 const DRAINED_SHARE = 0.01;
+/** Share of an instrument's range by which the true value must lie beyond: more than rounding. */
+const RANGE_MARGIN = 1e-3;
 /** Range that the library's functions of liquid water share, K: saturation pressure from 273.15, viscosity and density to 383.15. */
 const WATER_RANGE: readonly [number, number] = [273.15, 383.15];
 
@@ -54,16 +56,33 @@ function ondaWarnings(record: RunRecord, fluids: Fluids): Warning[] {
       const rho = fluids.solventDensity(T);
       const isDrained = !(u > DRAINED_SHARE * design);
       if (isDrained && drained) return;
-      const left = ondaRangeLeft(geometry, packing.criticalSurfaceTension, u * rho, rho, fluids.solventViscosity(T), fluids.surfaceTension(T));
+      const left = ondaRangeLeft(
+        geometry,
+        packing.criticalSurfaceTension,
+        u * rho,
+        rho,
+        fluids.solventViscosity(T),
+        fluids.surfaceTension(T),
+      );
       if (isDrained) {
         drained = true;
-        note(first, 'drained', record.time[r], `the ${place} segment is drained (under 1 % of the design liquid rate): the wetted area of a draining film is an assumption, not [Onda1968]`);
+        note(
+          first,
+          'drained',
+          record.time[r],
+          `the ${place} segment is drained (under 1 % of the design liquid rate): the wetted area of a draining film is an assumption, not [Onda1968]`,
+        );
         return;
       }
       if (left === undefined) return;
       const { range, value } = left;
       const how = value < range.min ? `below ${formatNumber(range.min, 2)}` : `above ${formatNumber(range.max, 2)}`;
-      note(first, range.name, record.time[r], `${range.name} in the ${place} segment is ${formatNumber(value, 2)}, ${how}: outside the data behind wetted area and coefficients [Onda1968]`);
+      note(
+        first,
+        range.name,
+        record.time[r],
+        `${range.name} in the ${place} segment is ${formatNumber(value, 2)}, ${how}: outside the data behind wetted area and coefficients [Onda1968]`,
+      );
     });
   });
   return [...first.values()];
@@ -85,7 +104,12 @@ function temperatureWarnings(record: RunRecord): Warning[] {
       const r = Array.from(value).findIndex((T) => T < low || T > high);
       if (r < 0) continue;
       const span = `${formatNumber(low - 273.15, 4)} to ${formatNumber(high - 273.15, 4)} degC`;
-      note(first, phase, time[r], `${phase} temperature in the ${place} segment is ${formatNumber(value[r] - 273.15, 3)} degC, outside ${span}, the range of the property functions`);
+      note(
+        first,
+        phase,
+        time[r],
+        `${phase} temperature in the ${place} segment is ${formatNumber(value[r] - 273.15, 3)} degC, outside ${span}, the range of the property functions`,
+      );
     }
   }
   return [...first.values()];
@@ -93,12 +117,20 @@ function temperatureWarnings(record: RunRecord): Warning[] {
 
 /** Range that the solvent's curves share, K. */
 function propertyRange({ solvent }: Case): readonly [number, number] {
-  const curves: (Curve | undefined)[] = [solvent.density, solvent.viscosity, solvent.surfaceTension, solvent.vapourPressure];
+  const curves: (Curve | undefined)[] = [
+    solvent.density,
+    solvent.viscosity,
+    solvent.surfaceTension,
+    solvent.vapourPressure,
+  ];
   let low = 0;
   let high = Infinity;
   for (const curve of curves) {
     if (curve === undefined || curve.kind === 'constant') continue;
-    const ends = curve.kind === 'points' ? [curve.temperature[0], curve.temperature[curve.temperature.length - 1]] : libraryRange(curve.id);
+    const ends =
+      curve.kind === 'points'
+        ? [curve.temperature[0], curve.temperature[curve.temperature.length - 1]]
+        : libraryRange(curve.id);
     low = Math.max(low, ends[0]);
     high = Math.min(high, ends[1]);
   }
@@ -118,12 +150,20 @@ function floodWarnings(record: RunRecord): Warning[] {
   };
   const near = when('flood-approach', TRANSFER_LIMIT);
   if (near !== undefined) {
-    found.push({ kind: 'near-flood', time: near, text: `gas velocity above ${100 * TRANSFER_LIMIT} % of the flooding velocity: transfer there is not backed by a published correlation` });
+    found.push({
+      kind: 'near-flood',
+      time: near,
+      text: `gas velocity above ${100 * TRANSFER_LIMIT} % of the flooding velocity: transfer there is not backed by a published correlation`,
+    });
   }
   const flooded = when('loading', FLOOD);
   if (flooded !== undefined) {
     const N = record.plant.column.beds.reduce((sum, bed) => sum + bed.segments, 0);
-    found.push({ kind: 'flooded', time: flooded, text: `past the flood point the pressure drop is indicative and depends on the number of segments (here ${N})` });
+    found.push({
+      kind: 'flooded',
+      time: flooded,
+      text: `past the flood point the pressure drop is indicative and depends on the number of segments (here ${N})`,
+    });
   }
   return found;
 }
@@ -143,12 +183,19 @@ function henryWarnings(record: RunRecord): Warning[] {
 function instrumentWarnings(record: RunRecord): Warning[] {
   return record.plant.instruments.flatMap(({ tag, range }, i) => {
     if (range === undefined) return [];
+    const margin = RANGE_MARGIN * (range[1] - range[0]);
     const r = record.truth.findIndex((row, k) => {
       const shown = record.shown[k][i];
-      return (shown === range[1] && row[i] > range[1]) || (shown === range[0] && row[i] < range[0]);
+      return (shown === range[1] && row[i] > range[1] + margin) || (shown === range[0] && row[i] < range[0] - margin);
     });
     if (r < 0) return [];
-    return [{ kind: 'instrument-range', time: record.time[r], text: `${tag} stands at the end of its range; the true value is beyond it` }];
+    return [
+      {
+        kind: 'instrument-range',
+        time: record.time[r],
+        text: `${tag} stands at the end of its range; the true value is beyond it`,
+      },
+    ];
   });
 }
 

@@ -265,7 +265,12 @@ export const resultSchema = v.strictObject({
     title: text('from the case file'),
     sha256: v.pipe(v.string(), v.regex(/^[0-9a-f]{64}$/), describe('SHA-256 of the text of the case file, UTF-8')),
   }),
-  scenario: v.strictObject({ id: text('id'), title: text('title'), duration: real('s'), initial: text('initial state') }),
+  scenario: v.strictObject({
+    id: text('id'),
+    title: text('title'),
+    duration: real('s'),
+    initial: text('initial state'),
+  }),
   settings: v.strictObject({
     method: text('integrator'),
     rtol: real('relative tolerance'),

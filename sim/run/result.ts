@@ -69,7 +69,15 @@ export function resultOf(run: Run, extras: ResultExtras): ResultDocument {
     series: seriesOf(record),
     profiles: run.profiles.map(({ time, beds }) => ({
       time,
-      beds: beds.map((bed) => ({ ...bed, rows: bed.rows.map((row) => ({ ...row, gas: [...row.gas], liquid: [...row.liquid], transfer: [...row.transfer] })) })),
+      beds: beds.map((bed) => ({
+        ...bed,
+        rows: bed.rows.map((row) => ({
+          ...row,
+          gas: [...row.gas],
+          liquid: [...row.liquid],
+          transfer: [...row.transfer],
+        })),
+      })),
     })),
     secondOpinion: extras.secondOpinion ?? null,
     convergence: extras.convergence ?? null,
@@ -79,7 +87,16 @@ export function resultOf(run: Run, extras: ResultExtras): ResultDocument {
 function settingsOf(plant: Case): ResultDocument['settings'] {
   const { rtol, axialScheme, recordEvery, maxSteps, noise, seed } = plant.run;
   const method = isMethod(plant.run.method) ? plant.run.method : METHODS[0];
-  return { method, rtol, segments: plant.column.beds.map((b) => b.segments), axialScheme, recordEvery, maxSteps, noise, seed };
+  return {
+    method,
+    rtol,
+    segments: plant.column.beds.map((b) => b.segments),
+    axialScheme,
+    recordEvery,
+    maxSteps,
+    noise,
+    seed,
+  };
 }
 
 /** Balance between the start of a run and now. */

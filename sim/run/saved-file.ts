@@ -50,12 +50,23 @@ const savedSchema = v.looseObject({
   }),
   run: v.looseObject({
     scenario: v.string(),
-    stepper: v.looseObject({ t: v.number(), tPrevious: v.number(), y: numbers, stepSize: v.number(), method: v.looseObject({}) }),
+    stepper: v.looseObject({
+      t: v.number(),
+      tPrevious: v.number(),
+      y: numbers,
+      stepSize: v.number(),
+      method: v.looseObject({}),
+    }),
     modes: v.looseObject({}),
     programs: v.array(v.looseObject({})),
     logic: v.looseObject({ truth: v.array(v.boolean()) }),
     signals: v.looseObject({ modes: v.array(v.looseObject({})), history: v.looseObject({}) }),
-    record: v.looseObject({ time: numbers, rows: v.array(numbersOrNull), truth: v.array(numbersOrNull), shown: v.array(numbersOrNull) }),
+    record: v.looseObject({
+      time: numbers,
+      rows: v.array(numbersOrNull),
+      truth: v.array(numbersOrNull),
+      shown: v.array(numbersOrNull),
+    }),
     events: v.array(v.looseObject({ time: v.number(), kind: v.string(), tag: v.string(), text: v.string() })),
     interventions: v.array(v.looseObject({ time: v.number(), actions: v.array(v.looseObject({})) })),
     profiles: v.array(v.looseObject({ time: v.number() })),
@@ -72,7 +83,14 @@ export function choicesOf(plant: Case, duration: number): RunChoices {
 
 /** Text of a saved run. */
 export function writeSaved(caseText: string, choices: RunChoices, run: SavedRun): string {
-  const file: SavedFile = { format: FORMAT, formatVersion: 1, tool: VERSION, caseSha256: caseHash(caseText), choices, run };
+  const file: SavedFile = {
+    format: FORMAT,
+    formatVersion: 1,
+    tool: VERSION,
+    caseSha256: caseHash(caseText),
+    choices,
+    run,
+  };
   return `${JSON.stringify(file)}\n`;
 }
 
@@ -88,7 +106,14 @@ export function readSaved(
   const refuse = (kind: Issue['kind'], expected: string, received: string, hint?: string) =>
     ({
       ok: false,
-      issue: { path: 'saved run', expected, received, kind, severity: 'error', ...(hint === undefined ? {} : { hint }) },
+      issue: {
+        path: 'saved run',
+        expected,
+        received,
+        kind,
+        severity: 'error',
+        ...(hint === undefined ? {} : { hint }),
+      },
     }) as const;
   const json = parseJson(text);
   if (!json.ok) return refuse('syntax', json.fault.expected, json.fault.received);
@@ -102,7 +127,12 @@ export function readSaved(
     return refuse('version', `a run saved by version ${VERSION}`, file.tool, 'run it again from the start');
   }
   if (file.caseSha256 !== caseHash(caseText)) {
-    return refuse('contradiction', 'the case that the run was saved with', 'another text', 'run it again from the start');
+    return refuse(
+      'contradiction',
+      'the case that the run was saved with',
+      'another text',
+      'run it again from the start',
+    );
   }
   return { ok: true, value: file };
 }

@@ -2,10 +2,9 @@
 import type { Case, Limit } from '../case/case.ts';
 import { formatTime } from '../units.ts';
 import { headlineLimit } from './answers.ts';
-import type { QuantityKind } from './observation.ts';
 import { measuredText, normalMassText, quantityText, type UnitSystem } from './quantity-text.ts';
 import type { Answers, LimitAnswer, ResultDocument } from './result-schema.ts';
-import { quantityIndex, recordOf, traceOf, type RunRecord } from './run-record.ts';
+import { recordOf, traceOf, type RunRecord } from './run-record.ts';
 import type { Run } from './simulate.ts';
 
 /** A peak this close to the initial value is no peak, over the initial value: what a steady state drifts by stays below. */
@@ -48,22 +47,26 @@ function answerSentence(record: RunRecord, answers: Answers, system: UnitSystem)
   const verdicts = together
     .sort((a, b) => Number(b.averaging.kind === 'none') - Number(a.averaging.kind === 'none'))
     .map((l) => verdict(plant, l, system));
-  const others = answers.limits.filter((l) => !together.includes(l) && !l.kept).map((l) => `${l.label} breaks its limit`);
+  const others = answers.limits
+    .filter((l) => !together.includes(l) && !l.kept)
+    .map((l) => `${l.label} breaks its limit`);
   return `${[course(record, headline, system), ...verdicts, ...others].join('; ')}.`;
 }
 
-/** What the quantity did: peak, strength on the limit's gas, and when, counted from the upset. */
+/** What the quantity did: worst value, for a gas also per normal volume, and when, counted from the upset. */
 function course(record: RunRecord, headline: LimitAnswer, system: UnitSystem): string {
-  const quantity = record.quantities[quantityIndex(record, headline.quantity)];
-  const kind: QuantityKind = quantity?.kind ?? 'fraction';
-  const { peak, initial, basis } = headline;
-  // The recorded value of the wet gas for strengths, whatever the limit refers to.
-  const raw = valueNear(record, headline.quantity, peak.time, peak.value);
-  const mass = peak.mgPerNm3 === null ? '' : ` (${normalMassText(peak.mgPerNm3)} ${basis})`;
-  const name = subject(record.plant, headline);
-  const value = `${quantityText(raw, kind, system)}${mass}`;
+  const { plant } = record;
+  const { peak, initial, basis, quantity, kind } = headline;
+  const limit = plant.limits.find((l) => l.id === headline.id);
+  const name = subject(plant, headline);
+  const value =
+    peak.mgPerNm3 !== null
+      ? `${quantityText(nearestValue(record, quantity, peak.time), 'gas-strength', system)} (${normalMassText(peak.mgPerNm3)} ${basis})`
+      : limit === undefined
+        ? String(peak.value)
+        : measuredText(plant, limit, peak.value, system);
   if (Math.abs(peak.value - initial.value) <= FLAT * Math.abs(initial.value)) return `${name} stays at ${value}`;
-  return `${name} ${headline.kind === 'max' ? 'peaks at' : 'falls to'} ${value} ${afterUpset(record, peak.time)}`;
+  return `${name} ${kind === 'max' ? 'peaks at' : 'falls to'} ${value} ${afterUpset(record, peak.time)}`;
 }
 
 /** "1 min after P-310A trips", "2 min after the start". */
@@ -104,7 +107,8 @@ function unlimited(record: RunRecord, system: UnitSystem): string {
   let top = 0;
   for (let i = 1; i < value.length; i++) if (value[i] > value[top]) top = i;
   const name = `${solutes[0].name} at the outlet`;
-  if (value[top] - value[0] <= FLAT * value[0]) return `${name} stays at ${quantityText(value[0], 'gas-strength', system)}; the case states no limit.`;
+  if (value[top] - value[0] <= FLAT * value[0])
+    return `${name} stays at ${quantityText(value[0], 'gas-strength', system)}; the case states no limit.`;
   return `${name} peaks at ${quantityText(value[top], 'gas-strength', system)} ${afterUpset(record, time[top])}; the case states no limit.`;
 }
 
@@ -114,14 +118,13 @@ function subject(plant: Case, { quantity, label, solute }: LimitAnswer): string 
   return quantity.startsWith('gas-outlet.') && name !== undefined ? `${name} at the outlet` : label;
 }
 
-/** Recorded value at the moment of a refined peak; the refinement's own value where the basis changes nothing. */
-function valueNear(record: RunRecord, id: string, time: number, peak: number): number {
-  const trace = traceOf(record, id);
+/** Recorded value nearest to a moment: of the gas as it is, whatever a limit refers to. */
+function nearestValue(record: RunRecord, id: string, time: number): number {
   let near = 0;
   for (let i = 1; i < record.time.length; i++) {
     if (Math.abs(record.time[i] - time) < Math.abs(record.time[near] - time)) near = i;
   }
-  return Number.isFinite(trace.value[near]) ? trace.value[near] : peak;
+  return traceOf(record, id).value[near];
 }
 
 function capital(text: string): string {

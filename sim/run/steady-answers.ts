@@ -47,7 +47,8 @@ export interface BedAnswer {
   /** Pa */ readonly pressureDrop: number;
   /** Mean over the bed, and in its worst segment, Pa/m. */ readonly gradient: number;
   readonly worstGradient: number;
-  /** Pressure gradient at flooding by the packing factor, Pa/m; null without one. */ readonly floodGradient: number | null;
+  /** Pressure gradient at flooding by the packing factor, Pa/m; null without one. */ readonly floodGradient:
+    number | null;
   /** Least superficial liquid velocity in the bed, and the least that wets, m/s. */
   readonly liquidVelocity: number;
   readonly wettingVelocity: number;
@@ -74,7 +75,12 @@ export function steadyAnswers(run: Run): SteadyAnswer {
   const approach = floodApproach(column);
   return {
     outlets: outletsOf(record),
-    limits: limitAnswers(record).map((l) => ({ id: l.id, value: l.initial.value, limit: l.limit.value, kept: l.over.first === null })),
+    limits: limitAnswers(record).map((l) => ({
+      id: l.id,
+      value: l.initial.value,
+      limit: l.limit.value,
+      kept: l.over.first === null,
+    })),
     floodApproach: Number.isFinite(approach) ? approach : null,
     beds: plant.column.beds.map((_, b) => bedAnswer(column, b)),
     transfer: plant.column.beds.flatMap((_, b) => plant.solutes.map((_solute, k) => transferAnswer(column, b, k))),
@@ -117,14 +123,22 @@ function bedAnswer(column: Column, b: number): BedAnswer {
     (sum, chain) => sum + (chain.cell.crossSection / area) * chain.work.outputs[outputs.pressureDrop],
     0,
   );
-  const held = cells.reduce((sum, { chain, at }) => sum + chain.work.primitives[at + index.holdup] * chain.cell.crossSection * chain.cell.height, 0);
+  const held = cells.reduce(
+    (sum, { chain, at }) =>
+      sum + chain.work.primitives[at + index.holdup] * chain.cell.crossSection * chain.cell.height,
+    0,
+  );
   return {
     bed: b + 1,
     pressureDrop: drop,
     gradient: drop / height,
-    worstGradient: Math.max(...cells.map(({ chain, at }) => chain.work.primitives[at + index.pressureDrop] / chain.cell.height)),
+    worstGradient: Math.max(
+      ...cells.map(({ chain, at }) => chain.work.primitives[at + index.pressureDrop] / chain.cell.height),
+    ),
     floodGradient: packing.packingFactor === undefined ? null : kisterGillFloodPressureDrop(packing.packingFactor),
-    liquidVelocity: Math.min(...cells.map(({ chain, at }) => chain.work.primitives[at + index.demand] / chain.cell.crossSection)),
+    liquidVelocity: Math.min(
+      ...cells.map(({ chain, at }) => chain.work.primitives[at + index.demand] / chain.cell.crossSection),
+    ),
     wettingVelocity: minimumWettingVelocity(packing.area, packing.nominalSize),
     holdup: held / (area * height),
   };
@@ -143,13 +157,13 @@ function transferAnswer(column: Column, b: number, k: number): TransferAnswer {
     const x = q[at + index.x + k + 1];
     const p = chain.pressure(c);
     const scale = equilibrium.pressureScale(T) * (equilibrium.kind === 'ratio' ? p : 1);
-    const partial =
-      equilibrium.kind === 'table' ? equilibrium.partialPressure(T, x) : scale * equilibrium.activity(x);
+    const partial = equilibrium.kind === 'table' ? equilibrium.partialPressure(T, x) : scale * equilibrium.activity(x);
     const slope = equilibrium.kind === 'table' ? equilibrium.slope(T, x) : scale * equilibrium.activitySlope(x);
     const G = chain.work.flow[c];
     const y = q[at + index.y + k + 1];
     const driving = y - partial / p;
-    if (Math.abs(driving) > LEAST_DRIVING * Math.abs(y)) units += q[at + index.transfer + k + 1] / (G * driving) / zones.length;
+    if (Math.abs(driving) > LEAST_DRIVING * Math.abs(y))
+      units += q[at + index.transfer + k + 1] / (G * driving) / zones.length;
     const molarVolume = q[at + index.liquidRow];
     factors.push((q[at + index.demand] * p) / (molarVolume * slope * G));
   }
@@ -169,5 +183,12 @@ function transferAnswer(column: Column, b: number, k: number): TransferAnswer {
 /** A scenario that stands at the steady state and does nothing. */
 export function steadyScenario(plant: Case): Case['scenarios'][number] {
   const { recordEvery } = plant.run;
-  return { id: 'steady', title: 'Steady state', initial: 'steady', steps: [], duration: recordEvery, interlocksInService: [] };
+  return {
+    id: 'steady',
+    title: 'Steady state',
+    initial: 'steady',
+    steps: [],
+    duration: recordEvery,
+    interlocksInService: [],
+  };
 }

@@ -9,10 +9,21 @@ import { traceOf, type RunRecord } from './run-record.ts';
 const LEAST_CARRY_OVER = 1e-6;
 
 /** All events in order of time; those of the run before those read off at the same moment. */
-export function timelineOf(record: RunRecord, answers: Answers, warnings: readonly Warning[], system: UnitSystem = 'case'): ResultEvent[] {
+export function timelineOf(
+  record: RunRecord,
+  answers: Answers,
+  warnings: readonly Warning[],
+  system: UnitSystem = 'case',
+): ResultEvent[] {
   const derived: RunEvent[] = [
     ...limitEvents(record, answers, system),
-    ...stretchEvents(record, 'loading', 1, ['flooding', 'a segment floods'], ['flooding-over', 'no segment is flooded any more']),
+    ...stretchEvents(
+      record,
+      'loading',
+      1,
+      ['flooding', 'a segment floods'],
+      ['flooding-over', 'no segment is flooded any more'],
+    ),
     ...stretchEvents(
       record,
       'carry-over',
@@ -49,7 +60,15 @@ function limitEvents({ plant }: RunRecord, answers: Answers, system: UnitSystem)
       { time: from, kind: 'limit-crossed', tag: answer.id, text: `${what} is ${beyond} ${value}`, value: limit.value },
       ...(open
         ? []
-        : [{ time: to, kind: 'limit-kept-again', tag: answer.id, text: `${what} keeps ${value} again`, value: limit.value } as const]),
+        : [
+            {
+              time: to,
+              kind: 'limit-kept-again',
+              tag: answer.id,
+              text: `${what} keeps ${value} again`,
+              value: limit.value,
+            } as const,
+          ]),
     ]);
   });
 }

@@ -51,7 +51,9 @@ function listScenarios(plant: Case): number {
 function loadSaved(file: string, caseText: string, options: Options): SavedFile {
   const result = readSaved(readText(file, 'saved run'), caseText);
   if (!result.ok) throw new BadInput([{ ...result.issue, path: file }]);
-  const given = (['scenario', 'until', 'segments', 'tolerance', 'method', 'seed', 'noise'] as const).find((name) => options[name] !== undefined);
+  const given = (['scenario', 'until', 'segments', 'tolerance', 'method', 'seed', 'noise'] as const).find(
+    (name) => options[name] !== undefined,
+  );
   if (given !== undefined) {
     throw badOption(`--${given}`, 'no such option beside --resume', `--${given}`, 'a saved run goes on as it began');
   }
@@ -64,7 +66,11 @@ function chosenScenario(plant: Case, options: Options, saved: SavedFile | undefi
   const found = id === undefined ? plant.scenarios[0] : plant.scenarios.find((s) => s.id === id);
   if (found === undefined) {
     const known = plant.scenarios.map((s) => s.id).join(', ');
-    throw badOption('--scenario', known === '' ? 'a case with scenarios' : `one of ${known}`, id === undefined ? 'a case without' : `"${id}"`);
+    throw badOption(
+      '--scenario',
+      known === '' ? 'a case with scenarios' : `one of ${known}`,
+      id === undefined ? 'a case without' : `"${id}"`,
+    );
   }
   const duration = saved?.choices.duration ?? options.until ?? found.duration;
   if (!(duration > 0)) throw badOption('--until', 'a time after the start', '0 s');
@@ -129,7 +135,9 @@ function output(result: ResultDocument, run: Run, options: Options, inputs: read
   else if (csv === true) process.stdout.write(writeCsv(result));
   else {
     const ink = inkOf(process.stdout);
-    process.stdout.write(runReport({ plant: run.plant, result, sentence: measuredSentence(run, result, units), units, ink }));
+    process.stdout.write(
+      runReport({ plant: run.plant, result, sentence: measuredSentence(run, result, units), units, ink }),
+    );
   }
   if (result.outcome.failure !== null) say(`the calculation could not go on: ${result.outcome.failure.text}`);
 }

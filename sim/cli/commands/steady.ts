@@ -1,12 +1,11 @@
 /** `bedwave steady`: the design point. */
 import { createRun, steadyAnswers, steadyScenario } from '../../index.ts';
 import { EXIT } from '../exit.ts';
-import { loadCase } from '../files.ts';
+import { loadCase, writeText } from '../files.ts';
 import { inkOf } from '../ink.ts';
 import type { Options } from '../options.ts';
 import { steadyReport } from '../steady-report.ts';
 import { say, sayIssues } from '../talk.ts';
-import { writeText } from '../files.ts';
 
 /** Runs the command; returns the exit code. @throws BadInput */
 export function steadyCommand(path: string, { json, units, segments }: Options): number {
