@@ -317,6 +317,9 @@ export const resultSchema = v.strictObject({
   convergence: v.nullable(convergence),
 });
 
+/** Parts that the JSON Schema writes once and refers to by name. */
+export const RESULT_PARTS = { point, interval, exceedance, average, crossing, signal, profile };
+
 /** A result document. */
 export type ResultDocument = v.InferOutput<typeof resultSchema>;
 /** The part of it that answers the questions. */
