@@ -8,8 +8,15 @@ import { runningIntegral, vertex, type Interval, type Peak, type Side, type Trac
 
 /** Least share of valid data in a window for a valid average. Engineering judgement: two thirds; permits differ. */
 export const LEAST_VALID_SHARE = 2 / 3;
+/** Slack on it: rounding at the very moment at which an average turns valid. */
+const SHARE_SLACK = 1e-9;
 /** Root tolerance of times, s. */
 const TIME_TOLERANCE = 1e-9;
+
+/** Whether a share of valid data makes a valid average. */
+export function isValid(share: number): boolean {
+  return share >= LEAST_VALID_SHARE - SHARE_SLACK;
+}
 
 /** An average that runs with time. */
 export interface RollingAverage {
@@ -71,6 +78,14 @@ export function rollingAverage(trace: Trace, window: number, bad: readonly Inter
   }
   for (const { from, to } of bad) for (const edge of [from, to]) for (const at of [edge, edge + window]) mark(at);
   const breaks = [...marks].sort((a, b) => a - b);
+  // Between marks the valid share is a straight line: where it passes the least share, validity changes.
+  const shares = breaks.map((b) => mean(b - window, b).share);
+  breaks.slice(1).forEach((b, i) => {
+    const from = shares[i] - LEAST_VALID_SHARE;
+    const to = shares[i + 1] - LEAST_VALID_SHARE;
+    if (from * to < 0) mark(breaks[i] + (from / (from - to)) * (b - breaks[i]));
+  });
+  breaks.splice(0, breaks.length, ...[...marks].sort((a, b) => a - b));
   const time: number[] = [];
   const value: number[] = [];
   const validShare: number[] = [];
@@ -100,7 +115,7 @@ export function averagePeak(average: RollingAverage, side: Side): Peak | undefin
   let best: Peak | undefined;
   average.time.forEach((time, i) => {
     const value = average.value[i];
-    if (average.validShare[i] < LEAST_VALID_SHARE || !Number.isFinite(value)) return;
+    if (!isValid(average.validShare[i]) || !Number.isFinite(value)) return;
     if (best === undefined || sign * value > sign * best.value) best = { time, value };
   });
   return best;
@@ -110,7 +125,7 @@ export function averagePeak(average: RollingAverage, side: Side): Peak | undefin
 export function averageIntervals(average: RollingAverage, level: number, side: Side): Interval[] {
   const { time, value, validShare } = average;
   const beyond = (i: number): boolean =>
-    validShare[i] >= LEAST_VALID_SHARE && (side === 'above' ? value[i] > level : value[i] < level);
+    isValid(validShare[i]) && (side === 'above' ? value[i] > level : value[i] < level);
   const found: Interval[] = [];
   let from: number | undefined;
   for (let i = 0; i < time.length; i++) {
@@ -139,7 +154,7 @@ function crossingTime({ time, value, at }: RollingAverage, i: number, level: num
 export function invalidTime({ time, validShare }: RollingAverage): number {
   let sum = 0;
   for (let i = 1; i < time.length; i++) {
-    if (Math.min(validShare[i], validShare[i - 1]) < LEAST_VALID_SHARE) sum += time[i] - time[i - 1];
+    if (0.5 * (validShare[i] + validShare[i - 1]) < LEAST_VALID_SHARE) sum += time[i] - time[i - 1];
   }
   return sum;
 }

@@ -5,7 +5,7 @@ import {
   averagePeak,
   blockAverages,
   invalidTime,
-  LEAST_VALID_SHARE,
+  isValid,
   rollingAverage,
   type BlockAverage,
 } from './averages.ts';
@@ -111,7 +111,7 @@ function averageOf(
     return { peak: top === undefined ? null : point(top), over, blocks: null, worstAlignment: null, ...rest };
   }
   const blocks = blockAverages(trace, averaging.window, bad);
-  const valid = blocks.filter((b) => b.validShare >= LEAST_VALID_SHARE);
+  const valid = blocks.filter((b) => isValid(b.validShare));
   const worst = worstBlock(valid, side);
   return {
     peak: worst === undefined ? null : point({ time: worst.to, value: worst.value }),
@@ -120,7 +120,7 @@ function averageOf(
         .filter((b) => isBeyond(b.value, limit.value, side))
         .map(({ from, to, complete }) => ({ from, to, open: !complete })),
     ),
-    blocks: blocks.map((b) => ({ ...b, value: b.validShare >= LEAST_VALID_SHARE ? b.value : null })),
+    blocks: blocks.map((b) => ({ ...b, value: isValid(b.validShare) ? b.value : null })),
     worstAlignment: top === undefined ? null : point(top),
     ...rest,
   };
