@@ -97,10 +97,12 @@ export function fillColumn(column: Column, start: StartingState, y: Float64Array
   const yGas = restingGas(column, TG, start.gasOn ? gas.feed.humidity : Math.min(gas.feed.humidity, 0.5));
   if (start.gasOn) for (let k = 1; k < yGas.length; k++) yGas[k] = gas.feed.composition[k - 1];
   const topPressure = modes.channels.topPressure;
+  const { hydraulics } = plant.column;
+  const holdup = hydraulics.model === 'prescribed' ? hydraulics.holdup : start.holdup;
   for (const zones of column.chains) {
     for (const chain of zones) {
       for (let c = 0; c < chain.layout.cells; c++) {
-        fillCell(fluids, chain, machinery.molarVolume, layout.block, c, { holdup: start.holdup, TL, x, TG, y: yGas, pressure: topPressure }, y);
+        fillCell(fluids, chain, machinery.molarVolume, layout.block, c, { holdup, TL, x, TG, y: yGas, pressure: topPressure }, y);
       }
     }
   }
