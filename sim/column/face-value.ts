@@ -2,7 +2,7 @@
  * Face values of a quantity carried along a chain of cells whose states are cell means.
  * The interior form is the exact reconstruction of a + b exp(c z), the steady profile of a linear counter-current
  * bed; it is bounded by its neighbours, so it does not ring. The inlet form puts the same exponential through the
- * known inlet value and the first two means; the outlet form carries the last ratio on.
+ * known inlet value and the first two means; the outlet form carries the last ratio on, as long as that is a profile.
  * Derivations: from the three means, or the inlet value and two means, of a + b exp(c z) on a uniform grid.
  */
 
@@ -24,6 +24,11 @@ const FLAT = 1e-280;
 function weight(r: number, out: { p: number; dp: number }): void {
   if (r <= 0) {
     out.p = 0;
+    out.dp = 0;
+    return;
+  }
+  if (r > 4) {
+    out.p = 1; // reached at r = 3.4
     out.dp = 0;
     return;
   }
@@ -68,6 +73,14 @@ export function interiorFace(u: number, c: number, d: number, out: FaceValue): v
   out.d3 = w.dp;
 }
 
+/**
+ * Ratio of two successive differences above which they are a front passing through, not a profile: a resolved bed's
+ * stay below exp(|NOG (1 - 1/A)|/N), some 2. From there the outlet's extrapolation fades.
+ */
+const FRONT_RATIO = 4;
+/** Least outlet value over the last mean where the profile falls: what is not negative stays so. */
+const LEAST_SHARE = 0.5;
+
 /** Face leaving the last cell `c`, with `u` and `uu` upstream; slopes to (uu, u, c). */
 export function outletFace(uu: number, u: number, c: number, out: FaceValue): void {
   const delta = c - u;
@@ -80,8 +93,22 @@ export function outletFace(uu: number, u: number, c: number, out: FaceValue): vo
     return;
   }
   const r = delta / before;
-  weight(r, w);
-  out.value = c + w.p * delta;
+  if (r < FRONT_RATIO) {
+    weight(r, w);
+  } else {
+    const fade = FRONT_RATIO / r;
+    w.p = fade * fade;
+    w.dp = (-2 * w.p) / r;
+  }
+  const value = c + w.p * delta;
+  if (delta < 0 && value < LEAST_SHARE * c) {
+    out.value = LEAST_SHARE * c;
+    out.d1 = 0;
+    out.d2 = 0;
+    out.d3 = LEAST_SHARE;
+    return;
+  }
+  out.value = value;
   out.d1 = w.dp * r * r;
   out.d2 = -w.p - w.dp * r * (1 + r);
   out.d3 = 1 + w.p + w.dp * r;
@@ -162,6 +189,9 @@ export function inletFace(f: number, c1: number, c2: number, out: FaceValue): vo
     if (p >= INLET_WEIGHT_LIMIT) {
       p = INLET_WEIGHT_LIMIT;
       dp = 0;
+    } else if (p > s) {
+      p = s; // exact for s -> 0, where the table may be above it by its own error: never past the second mean
+      dp = 1;
     }
   }
   out.value = c1 + p * delta;
