@@ -25,7 +25,7 @@ export type { Answers, LimitAnswer, ResultDocument, SetpointCrossing } from './r
 export { writeCsv } from './run/result-csv.ts';
 export { CAUTION, measuredSentence } from './run/sentence.ts';
 export { headlineFigures, headlineLimit } from './run/answers.ts';
-export { measuredText, normalMassText, quantityText } from './run/quantity-text.ts';
+export { massText, measuredText, normalMassText, quantityText } from './run/quantity-text.ts';
 export type { UnitSystem } from './run/quantity-text.ts';
 export { choicesOf, readSaved, writeSaved } from './run/saved-file.ts';
 export type { RunChoices, SavedFile } from './run/saved-file.ts';

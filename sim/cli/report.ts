@@ -2,6 +2,7 @@
 import {
   formatNumber,
   formatTime,
+  massText,
   measuredText,
   quantityText,
   type Case,
@@ -77,7 +78,7 @@ function limitRows({ plant, result, units, ink }: ReportParts): string[][] {
       `${answer.kind === 'max' ? '<=' : '>='} ${text(answer.limit.value)}${answer.basis === 'dry' ? ' dry' : ''}`,
       text(answer.initial.value),
       text(answer.peak.value),
-      clock(answer.peak.time),
+      isFlat(answer) ? '-' : clock(answer.peak.time),
       shown === undefined ? '-' : `${text(shown.peak.value)}${end}`,
       isJudge ? beyond(answer.over.total) : '',
       isJudge ? verdict(answer, ink) : '',
@@ -85,6 +86,11 @@ function limitRows({ plant, result, units, ink }: ReportParts): string[][] {
     if (answer.average !== null) rows.push(averageRow(answer, text, ink));
   }
   return rows;
+}
+
+/** A worst value that is the initial one has no time of its own. */
+function isFlat({ peak, initial }: LimitAnswer): boolean {
+  return Math.abs(peak.value - initial.value) <= 1e-3 * Math.abs(initial.value);
 }
 
 function averageRow(answer: LimitAnswer, text: (value: number) => string, ink: Ink): string[] {
@@ -168,7 +174,7 @@ function commandRows({ plant, result, units }: ReportParts): string[][] {
 
 function amountRows({ plant, result, units }: ReportParts): string[][] {
   const { answers } = result;
-  const mass = (kg: number): string => quantityText(kg, 'mass', units);
+  const mass = (kg: number): string => massText(kg, units);
   const rows = [['', '']];
   for (const { solute, stack, aboveStart, diverted } of answers.emissions) {
     const name = plant.solutes.find((s) => s.id === solute)?.name ?? solute;

@@ -34,6 +34,18 @@ export function quantityText(value: number, sort: keyof typeof UNITS, system: Un
   return formatQuantity(value, kind, system === 'us' ? us : si, figures);
 }
 
+/** Least mass that is given in kg, and in g below that, kg. */
+const LEAST_IN_KG = 0.1;
+const LEAST_IN_G = 1e-4;
+
+/** A mass as text: kg, g or mg by size, or pounds. */
+export function massText(kg: number, system: UnitSystem): string {
+  const size = Math.abs(kg);
+  if (system === 'us' || size >= LEAST_IN_KG || kg === 0 || !Number.isFinite(kg))
+    return quantityText(kg, 'mass', system);
+  return formatQuantity(kg, 'mass', size >= LEAST_IN_G ? 'g' : 'mg', FIGURES);
+}
+
 /** What has a unit of its own in the case: a limit, an instrument. */
 export type InOwnUnit = Pick<Limit, 'measured' | 'unit'>;
 

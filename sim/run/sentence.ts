@@ -2,7 +2,7 @@
 import type { Case, Limit } from '../case/case.ts';
 import { formatTime } from '../units.ts';
 import { headlineLimit } from './answers.ts';
-import { measuredText, normalMassText, quantityText, type UnitSystem } from './quantity-text.ts';
+import { massText, measuredText, normalMassText, quantityText, type UnitSystem } from './quantity-text.ts';
 import type { Answers, LimitAnswer, ResultDocument } from './result-schema.ts';
 import { recordOf, traceOf, type RunRecord } from './run-record.ts';
 import type { Run } from './simulate.ts';
@@ -84,7 +84,7 @@ function verdict(plant: Case, answer: LimitAnswer, system: UnitSystem): string {
   const { average } = answer;
   if (average !== null) return averageVerdict(plant, limit, answer, value, system);
   if (answer.kept) return `never ${beyond} ${value}`;
-  const mass = answer.massOver === null ? '' : `, ${quantityText(answer.massOver, 'mass', system)} above it`;
+  const mass = answer.massOver === null ? '' : `, ${massText(answer.massOver, system)} above it`;
   const still = answer.over.intervals.some((i) => i.open) ? ' and still at the end' : '';
   return `${beyond} ${value} for ${formatTime(answer.over.total)}${still}${mass}`;
 }

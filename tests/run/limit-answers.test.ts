@@ -103,7 +103,9 @@ describe('averages', () => {
       quantities: { 'gas-outlet.acetone': [0, 0, 4e-3, 4e-3, 0, 0] },
       limits: [outletLimit(1e-3, { averaging: { kind: 'block', window } })],
     });
-    expect(found.average?.blocks?.map((b) => b.value)).toEqual([8e-4, 8e-4, 0].map((v) => expect.closeTo(v, DIGITS)));
+    expect(found.average?.blocks?.map((b) => b.value)).toEqual(
+      [8e-4, 8e-4, 0].map((v): unknown => expect.closeTo(v, DIGITS)),
+    );
     expect(found.average?.worstAlignment?.value).toBeCloseTo(1.6e-3, DIGITS);
     expect(found.kept).toBe(true);
   });

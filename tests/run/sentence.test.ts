@@ -20,10 +20,10 @@ const sentence = (given: Parameters<typeof handMade>[0], stopped?: number, syste
 };
 
 // The triangle: 2000 ppmv = 2e-3 x 58.08 g/mol / 22.414 L/mol = 5.18 g/Nm3, 60 s after the upset; above 1000 ppmv for
-// half its base and half the fall's tail: 60 s to 120 s; mass M G (area above): 0.05808 x 50 x 1e-3 x 60/2 = 0.0871 kg.
+// half its base and half the fall's tail: 60 s to 120 s; mass M G (area above): 0.05808 x 50 x 1e-3 x 60/2 = 87.1 g.
 test('a limit that is broken: peak, when, for how long, how much', () => {
   expect(sentence({ time, quantities, limits: [outletLimit(1e-3)], events: [upsetAt(30)] })).toBe(
-    'Acetone at the outlet peaks at 2000 ppmv (5.18 g/Nm3 wet) 1 min after P-310A trips; over 1000 ppmv for 1 min, 0.0871 kg above it.',
+    'Acetone at the outlet peaks at 2000 ppmv (5.18 g/Nm3 wet) 1 min after P-310A trips; over 1000 ppmv for 1 min, 87.1 g above it.',
   );
 });
 
