@@ -4,18 +4,24 @@ export { SimError } from './errors.ts';
 export type { SimFault } from './errors.ts';
 
 export { formatNumber, formatQuantity, formatTime, parseQuantity } from './units.ts';
+export { KINDS, unitsOf } from './units.ts';
+export type { Kind, KindEntry, UnitEntry } from './units/kinds.ts';
+export type { ParsedQuantity, QuantityIssue } from './units/parse.ts';
 
 export { LONGEST_TEXT, readCase } from './case/read.ts';
 export type { ReadOptions, ReadResult } from './case/read.ts';
 export { issueSentence } from './case/issues.ts';
 export type { Issue, IssueKind } from './case/issues.ts';
-export type { Action, Case, Instrument, Limit, Scenario } from './case/case.ts';
+export type * from './case/case.ts';
+export type { ResolveFile } from './case/reading.ts';
 
 export { createRun } from './run/simulate.ts';
-export type { Run, RunFailure, RunOutcome, SavedRun } from './run/simulate.ts';
+export type { Intervention, Run, RunFailure, RunOutcome, SavedRun } from './run/simulate.ts';
+export type { Recorder } from './run/recorder.ts';
+export type { StepFailure, StepperStats } from './numerics/ivp/stepper.ts';
 export { METHODS } from './run/integrators.ts';
 export type { RunEvent, EventKind } from './run/events.ts';
-export type { Observed, QuantityKind } from './run/observation.ts';
+export type { Observed, Observer, QuantityKind } from './run/observation.ts';
 export type { BedProfile, Profile, ProfileRow } from './run/profiles.ts';
 
 export { caseHash, resultOf, writeResult } from './run/result.ts';
@@ -25,10 +31,11 @@ export type { Answers, LimitAnswer, ResultDocument, SetpointCrossing } from './r
 export { writeCsv } from './run/result-csv.ts';
 export { CAUTION, measuredSentence } from './run/sentence.ts';
 export { headlineFigures, headlineLimit } from './run/answers.ts';
+export type { HeadlineFigure } from './run/answers.ts';
 export { massText, measuredText, normalMassText, quantityText } from './run/quantity-text.ts';
-export type { UnitSystem } from './run/quantity-text.ts';
+export type { InOwnUnit, UnitSystem } from './run/quantity-text.ts';
 export { choicesOf, readSaved, writeSaved } from './run/saved-file.ts';
 export type { RunChoices, SavedFile } from './run/saved-file.ts';
 export { steadyAnswers, steadyScenario } from './run/steady-answers.ts';
-export type { SteadyAnswer } from './run/steady-answers.ts';
+export type { BedAnswer, OutletAnswer, SteadyAnswer, SteadyLimit, TransferAnswer } from './run/steady-answers.ts';
 export { VERSION } from './run/version.ts';

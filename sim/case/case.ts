@@ -29,6 +29,7 @@ export interface Provenance {
   readonly isDefault: boolean;
 }
 
+/** The liquid that absorbs: constants and functions of temperature. */
 export interface Solvent {
   readonly id: string;
   readonly name: string;
@@ -43,6 +44,7 @@ export interface Solvent {
   /** Fuller diffusion volume of the vapour, cm3/mol as published. */ readonly diffusionVolume: number;
 }
 
+/** The gas that does not dissolve. */
 export interface Carrier {
   readonly id: string;
   readonly name: string;
@@ -60,6 +62,7 @@ export interface Antoine {
   readonly C: number;
 }
 
+/** How a solute shares itself between gas and liquid. */
 export type Equilibrium =
   | {
       readonly model: 'henry';
@@ -83,6 +86,7 @@ export type Equilibrium =
       /** Partial pressures, Pa, one row for each temperature. */ readonly pressure: readonly (readonly number[])[];
     };
 
+/** What is absorbed or stripped. */
 export interface Solute {
   readonly id: string;
   readonly name: string;
@@ -102,6 +106,7 @@ export interface Solute {
   readonly heatOfAbsorption: number | undefined;
 }
 
+/** Geometry and constants of a packing. */
 export interface Packing {
   readonly id: string;
   readonly shape: string;
@@ -127,6 +132,7 @@ export interface Packing {
   /** Of the solid, J/(m3 K). */ readonly solidHeatCapacity: number;
 }
 
+/** One packed bed. */
 export interface Bed {
   readonly packing: Packing;
   /** m */ readonly height: number;
@@ -135,6 +141,7 @@ export interface Bed {
   readonly redistributorVolume: number;
 }
 
+/** Hold-up and pressure drop: which law, and its constants. */
 export type Hydraulics =
   | {
       readonly model: 'stichlmair-bravo-fair';
@@ -149,6 +156,7 @@ export type Hydraulics =
   /** Fixed hold-up; liquid passes at the rate it enters; no pressure drop. */
   | { readonly model: 'prescribed'; readonly holdup: number };
 
+/** Mass transfer: which law, and its constants. */
 export type Transfer =
   | {
       readonly model: 'onda';
@@ -180,6 +188,7 @@ export type Transfer =
       readonly liquidExponent: number;
     };
 
+/** The column itself. */
 export interface ColumnSpec {
   /** m */ readonly diameter: number;
   /** Tangent height of the shell, m; undefined: not checked. */ readonly shellHeight: number | undefined;
@@ -203,6 +212,7 @@ export interface ColumnSpec {
   readonly evaporation: boolean;
 }
 
+/** Where the gas comes from and what it passes before the bed. */
 export interface GasSupply {
   readonly feed: {
     /** Wet total, mol/s. */ readonly rate: number;
@@ -228,12 +238,14 @@ export interface GasSupply {
   readonly diversion: { readonly tag: string; readonly stroke: number } | undefined;
 }
 
+/** A liquid stream. */
 export interface Stream {
   /** m3/s */ readonly rate: number;
   /** K */ readonly temperature: number;
   /** Mole fractions by solute. */ readonly composition: readonly number[];
 }
 
+/** Where the liquid comes from, and the vessels, pumps and valves around the bed. */
 export interface LiquidSupply {
   readonly mode: 'once-through' | 'recirculated';
   /** Once-through: the header. Recirculated: design circulation rate, initial guess of the sump. */ readonly feed: Stream;
@@ -301,6 +313,7 @@ export type Measured =
         | 'holdup';
     };
 
+/** A measurement and how it shows its quantity. */
 export interface Instrument {
   readonly tag: string;
   readonly measured: Measured;
@@ -315,6 +328,7 @@ export interface Instrument {
   /** s; undefined: continuous. */ readonly sampleInterval: number | undefined;
 }
 
+/** An alarm on an instrument. */
 export interface Alarm {
   readonly tag: string;
   readonly instrument: string;
@@ -326,6 +340,7 @@ export interface Alarm {
   readonly priority: 'low' | 'medium' | 'high' | 'critical';
 }
 
+/** A shown value beyond a number for a time. */
 export interface Condition {
   readonly instrument: string;
   readonly kind: 'above' | 'below';
@@ -333,6 +348,7 @@ export interface Condition {
   /** Must hold without break, s. */ readonly holdFor: number;
 }
 
+/** A condition, voted where there are several, with the actions it takes. */
 export interface Interlock {
   readonly tag: string;
   /** `trip`: latched until reset; `auto-start`: acts once each time its condition becomes true. */
@@ -344,8 +360,10 @@ export interface Interlock {
   readonly resetPermissive: Condition | undefined;
 }
 
+/** What a controller can move. */
 export type ControlledDevice = 'drain' | 'solvent-valve' | 'make-up' | 'bleed' | 'gas-damper' | 'cooler' | 'pump-speed';
 
+/** A proportional-integral controller. */
 export interface Controller {
   readonly tag: string;
   readonly instrument: string;
@@ -359,6 +377,7 @@ export interface Controller {
   /** In manual, and the first guess in automatic. */ readonly manualOutput: number;
 }
 
+/** A limit that is to be kept. */
 export interface Limit {
   readonly id: string;
   readonly measured: Measured;
@@ -391,9 +410,11 @@ export type Channel =
         | 'nonReturnValve.leak'; // share of the delivery lost through the idle pump, 0..1
     };
 
+/** Valves that an action can move. */
 export type ValveName =
   'gas-inlet' | 'diversion' | 'solvent' | 'drain' | 'make-up' | 'bleed' | 'emergency-water' | 'gas-damper';
 
+/** What is done to the plant at once. */
 export type Action =
   | {
       readonly kind: 'change';
@@ -436,6 +457,7 @@ export type Action =
   /** Several machines lose power together and come back (or not) after `duration`. */
   | { readonly kind: 'power-dip'; readonly tags: readonly string[]; readonly duration: number | undefined };
 
+/** One step of a scenario: when, and what. */
 export interface Step {
   readonly id: string;
   readonly label: string;
@@ -451,6 +473,7 @@ export interface Step {
   /** An upset starts trouble, an action answers it. */ readonly role: 'upset' | 'action';
 }
 
+/** A timeline of upsets and actions. */
 export interface Scenario {
   readonly id: string;
   readonly title: string;
@@ -470,6 +493,7 @@ export interface Uncertain {
   readonly source: string;
 }
 
+/** How a run is computed and recorded. */
 export interface RunSettings {
   readonly rtol: number;
   readonly method: string;
@@ -480,6 +504,7 @@ export interface RunSettings {
   readonly noise: boolean;
 }
 
+/** A whole case. */
 export interface Case {
   readonly formatVersion: 1;
   readonly title: string;

@@ -1,5 +1,6 @@
 /** What happened when: the entries of a run's event list. */
 
+/** Sorts of event. */
 export type EventKind =
   | 'upset'
   | 'action'
@@ -20,6 +21,7 @@ export type EventKind =
   | 'carry-over-over'
   | 'range-left';
 
+/** An entry of the event list. */
 export interface RunEvent {
   /** s from the start of the scenario. */ readonly time: number;
   readonly kind: EventKind;

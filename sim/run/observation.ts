@@ -31,6 +31,7 @@ export interface Observed {
   /** Solute that it is about, by index. */ readonly solute: number | undefined;
 }
 
+/** Names the quantities of a record and reads them off a state. */
 export interface Observer {
   readonly quantities: readonly Observed[];
   /** Index of a quantity by id; -1 when unknown. */ indexOf(id: string): number;
@@ -144,10 +145,10 @@ export function createObserver(column: Column): Observer {
 }
 
 /** A place in the packing that is looked at on the way. */
-export type WatchedPlace = 'top' | 'middle' | 'bottom';
+type WatchedPlace = 'top' | 'middle' | 'bottom';
 
 /** Segments at which loads and temperatures are written down: of the first zone, counted over all beds. */
-export function watchedCells(column: Column): { readonly place: WatchedPlace; readonly chain: Chain; readonly cell: number }[] {
+function watchedCells(column: Column): { readonly place: WatchedPlace; readonly chain: Chain; readonly cell: number }[] {
   const all = column.chains.flatMap(([chain]) => Array.from({ length: chain.layout.cells }, (_, cell) => ({ chain, cell })));
   return [
     { place: 'top', ...all[0] },

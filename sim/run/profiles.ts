@@ -29,6 +29,7 @@ export interface BedProfile {
   readonly rows: readonly ProfileRow[];
 }
 
+/** All beds at a moment. */
 export interface Profile {
   /** s */ readonly time: number;
   readonly beds: readonly BedProfile[];

@@ -10,9 +10,9 @@ import { quantityIndex, traceOf, type RunRecord } from './run-record.ts';
 import type { Warning } from './result-schema.ts';
 
 /** Gas velocity over the flooding velocity from which transfer rests on no published correlation; common practice, no source. */
-export const TRANSFER_LIMIT = 0.9;
+const TRANSFER_LIMIT = 0.9;
 /** Mole fraction up to which a Henry constant is used for a solute that has nothing better; common practice, no source. */
-export const HENRY_LIMIT = 0.01;
+const HENRY_LIMIT = 0.01;
 /** Loading that is the flood point. */
 const FLOOD = 1;
 /** Least velocity over that of the design rate with which a segment counts as drained. */

@@ -16,9 +16,9 @@ export interface Recorder {
   /** By row: instruments' true and shown values. */
   readonly truth: Float64Array[];
   readonly shown: Float64Array[];
-  add(t: number, y: Float64Array, truthOf: (i: number) => number, shownOf: (i: number) => number): void;
-  save(): RecordState;
-  restore(state: RecordState): void;
+  /** @internal */ add(t: number, y: Float64Array, truthOf: (i: number) => number, shownOf: (i: number) => number): void;
+  /** @internal */ save(): RecordState;
+  /** @internal */ restore(state: RecordState): void;
 }
 
 /** JSON has no NaN: it travels as null. */

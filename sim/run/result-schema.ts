@@ -323,32 +323,34 @@ export const RESULT_PARTS = { point, interval, exceedance, average, crossing, si
 /** A result document. */
 export type ResultDocument = v.InferOutput<typeof resultSchema>;
 /** The part of it that answers the questions. */
-export type Answers = v.InferOutput<typeof answers>;
+export type Answers = ResultDocument['answers'];
 /** One limit's answer. */
-export type LimitAnswer = v.InferOutput<typeof limitAnswer>;
+export type LimitAnswer = Answers['limits'][number];
 /** An average of a limited quantity. */
-export type AverageAnswer = v.InferOutput<typeof average>;
+export type AverageAnswer = NonNullable<LimitAnswer['average']>;
 /** Times beyond a limit. */
-export type Exceedance = v.InferOutput<typeof exceedance>;
+export type Exceedance = LimitAnswer['over'];
 /** A moment of a limited quantity. */
-export type Point = v.InferOutput<typeof point>;
-/** Emission of one solute. */
-export type Emission = v.InferOutput<typeof emission>;
-/** Instants of one alarm, interlock, command. */
-export type AlarmInstants = v.InferOutput<typeof alarmInstants>;
-export type InterlockInstants = v.InferOutput<typeof interlockInstants>;
-export type CommandInstant = v.InferOutput<typeof command>;
-/** A crossing of a setpoint, true and shown. */
-export type SetpointCrossing = v.InferOutput<typeof crossing>;
+export type Point = LimitAnswer['peak'];
 /** Recovery of a limited quantity. */
-export type Recovery = v.InferOutput<typeof recovery>;
+export type Recovery = LimitAnswer['recovery'];
+/** Emission of one solute. */
+export type Emission = Answers['emissions'][number];
+/** Instants of one alarm. */
+export type AlarmInstants = Answers['instants']['alarms'][number];
+/** Instants of one interlock. */
+export type InterlockInstants = Answers['instants']['interlocks'][number];
+/** A command, or an upset. */
+export type CommandInstant = Answers['instants']['commands'][number];
+/** A crossing of a setpoint, true and shown. */
+export type SetpointCrossing = Answers['instants']['alarms'][number]['setpoint'];
 /** An entry of the event list. */
-export type ResultEvent = v.InferOutput<typeof event>;
+export type ResultEvent = ResultDocument['events'][number];
 /** The balance. */
-export type ClosureAnswer = v.InferOutput<typeof closure>;
+export type ClosureAnswer = ResultDocument['closure'];
 /** A warning. */
-export type Warning = v.InferOutput<typeof warning>;
+export type Warning = ResultDocument['warnings'][number];
 /** Agreement with the independent integrator. */
-export type SecondOpinionBlock = v.InferOutput<typeof secondOpinion>;
+export type SecondOpinionBlock = NonNullable<ResultDocument['secondOpinion']>;
 /** N against 2 N. */
-export type ConvergenceBlock = v.InferOutput<typeof convergence>;
+export type ConvergenceBlock = NonNullable<ResultDocument['convergence']>;

@@ -100,7 +100,7 @@ function settingsOf(plant: Case): ResultDocument['settings'] {
 }
 
 /** Balance between the start of a run and now. */
-export function closureAnswer(run: Run): ClosureAnswer {
+function closureAnswer(run: Run): ClosureAnswer {
   const lines = closureOf(run.column, 0, run.initial, run.time, run.state);
   const finite = (v: number): number | null => (Number.isFinite(v) ? v : null);
   const worst = Math.max(...lines.map((l) => (Number.isFinite(l.error) ? l.error : Infinity)));
@@ -122,7 +122,7 @@ export function closureAnswer(run: Run): ClosureAnswer {
 }
 
 /** A failure in words. */
-export function failureText(failure: RunFailure, time: number): { kind: string; time: number; text: string } {
+function failureText(failure: RunFailure, time: number): { kind: string; time: number; text: string } {
   if (failure.kind === 'no-steady-state') {
     return {
       kind: failure.kind,

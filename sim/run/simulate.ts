@@ -31,6 +31,7 @@ export type RunFailure =
   | { readonly kind: 'integration'; readonly failure: StepFailure; /** In words: which part of the plant. */ readonly where: string }
   | { readonly kind: 'no-steady-state'; readonly residual: number; readonly where: string };
 
+/** How a run stands. */
 export type RunOutcome =
   | { readonly kind: 'running' }
   | { readonly kind: 'completed' }
@@ -39,19 +40,19 @@ export type RunOutcome =
 /** A run at a moment, as plain data. */
 export interface SavedRun {
   readonly scenario: string;
-  readonly stepper: StepperState;
-  readonly modes: SavedModes;
-  readonly programs: readonly Program[];
-  readonly logic: LogicState;
-  readonly signals: SignalsState;
-  readonly record: RecordState;
+  /** @internal */ readonly stepper: StepperState;
+  /** @internal */ readonly modes: SavedModes;
+  /** @internal */ readonly programs: readonly Program[];
+  /** @internal */ readonly logic: LogicState;
+  /** @internal */ readonly signals: SignalsState;
+  /** @internal */ readonly record: RecordState;
   readonly events: readonly RunEvent[];
   readonly interventions: readonly Intervention[];
   readonly profiles: readonly Profile[];
-  readonly ductResistance: number;
-  readonly initialState: readonly number[];
-  readonly pieceStart: number;
-  readonly nextRecord: number;
+  /** @internal */ readonly ductResistance: number;
+  /** @internal */ readonly initialState: readonly number[];
+  /** @internal */ readonly pieceStart: number;
+  /** @internal */ readonly nextRecord: number;
   readonly outcome: RunOutcome;
 }
 
@@ -60,10 +61,11 @@ type SavedModes = Pick<PlantModes, 'pumpRunning' | 'pumpAvailable' | 'fanRunning
   readonly controllers: PlantModes['controllers'];
 };
 
+/** A run on its way. */
 export interface Run {
   readonly plant: Case;
   readonly scenario: Scenario;
-  readonly column: Column;
+  /** @internal */ readonly column: Column;
   readonly recorder: Recorder;
   readonly events: readonly RunEvent[];
   readonly interventions: readonly Intervention[];
@@ -79,6 +81,7 @@ export interface Run {
   takeProfiles(times: readonly number[]): void;
   /** Carries actions out now, as an operator or a trainer does. */
   act(actions: readonly Action[], role: 'upset' | 'action', text: string): void;
+  /** The run at this moment, to be resumed bit for bit. */
   save(): SavedRun;
 }
 

@@ -5,7 +5,7 @@ import type { Kind, UnitEntry } from './kinds.ts';
 import { KINDS, kindsWithUnit, unitEntry, unitsOf } from './kinds.ts';
 
 /** Why a text is not a quantity of the kind asked for. */
-interface QuantityIssue {
+export interface QuantityIssue {
   /** What would have been right, a noun phrase. */
   readonly expected: string;
   /** How to mend it. */
