@@ -125,7 +125,8 @@ function timesTitle({ answers }: ResultDocument): string {
 function instantRows({ plant, result, units }: ReportParts): string[][] {
   const { answers } = result;
   const from = answers.firstUpset ?? 0;
-  const at = (t: number | null | undefined): string => (t === null || t === undefined ? '-' : clock(t - from, true));
+  const at = (t: number | null | undefined): string =>
+    t === null || t === undefined ? '-' : t === 0 && from > 0 ? 'from the start' : clock(t - from, true);
   const rows = [['', 'true value', 'shown value', 'acts']];
   const put = (tag: string, setpoint: SetpointCrossing, act: string): void => {
     if (setpoint.trueCrossing === null && setpoint.shownCrossing === null) return;

@@ -24,13 +24,16 @@ export interface SteadyParts {
   readonly answer: SteadyAnswer;
   readonly units: UnitSystem;
   readonly ink: Ink;
+  /** Why the figures are not those of a steady state; undefined when they are. */
+  readonly trouble: string | undefined;
 }
 
 /** The report, ending in a line break. */
 export function steadyReport(parts: SteadyParts): string {
-  const { plant, answer, ink } = parts;
+  const { plant, answer, ink, trouble } = parts;
   return blocksText([
     [ink.strong(plant.title)],
+    trouble === undefined ? [] : [ink.bad(`NOT STEADY: ${trouble}`)],
     section(ink, 'Outlet', outletRows(parts)),
     section(ink, 'Limits', limitRows(parts)),
     section(ink, 'Load', loadRows(parts)),

@@ -28,6 +28,7 @@ export function sentenceOf(
   stopped: number | undefined,
   system: UnitSystem = 'case',
 ): string {
+  if (stopped === 0) return 'The calculation could not begin: no state was found to start from.';
   const prefix = stopped === undefined ? '' : `The calculation stopped after ${formatTime(stopped)}; until then: `;
   const body = answerSentence(record, answers, system);
   return prefix + (prefix === '' ? capital(body) : body);
@@ -65,8 +66,16 @@ function course(record: RunRecord, headline: LimitAnswer, system: UnitSystem): s
       : limit === undefined
         ? String(peak.value)
         : measuredText(plant, limit, peak.value, system);
-  if (Math.abs(peak.value - initial.value) <= FLAT * Math.abs(initial.value)) return `${name} stays at ${value}`;
+  if (Math.abs(peak.value - initial.value) <= FLAT * Math.abs(initial.value)) {
+    return `${name} ${isLevel(record, quantity) ? 'stays at' : 'is worst at the start,'} ${value}`;
+  }
   return `${name} ${kind === 'max' ? 'peaks at' : 'falls to'} ${value} ${afterUpset(record, peak.time)}`;
+}
+
+/** Whether a quantity hardly moves over the whole record. */
+function isLevel(record: RunRecord, id: string): boolean {
+  const { value } = traceOf(record, id);
+  return Array.from(value).every((v) => Math.abs(v - value[0]) <= FLAT * Math.abs(value[0]));
 }
 
 /** "1 min after P-310A trips", "2 min after the start". */

@@ -15,16 +15,20 @@ export function steadyCommand(path: string, { json, units, segments }: Options):
   const plant = { ...read, column: { ...read.column, beds } };
   const run = createRun(plant, steadyScenario(plant));
   const answer = steadyAnswers(run);
-  const document = `${JSON.stringify({ format: 'bedwave-steady', formatVersion: 1, title: plant.title, ...answer }, null, 1)}\n`;
+  const trouble =
+    run.outcome.kind === 'failed'
+      ? `no steady state was found; what moves most: ${run.outcome.failure.where}`
+      : undefined;
+  const document = `${JSON.stringify({ format: 'bedwave-steady', formatVersion: 1, title: plant.title, steady: trouble === undefined, ...answer }, null, 1)}\n`;
   if (json === true) process.stdout.write(document);
   else {
     if (json !== undefined) {
       writeText(json, document, [path]);
       say(`wrote ${json}`);
     }
-    process.stdout.write(steadyReport({ plant, answer, units, ink: inkOf(process.stdout) }));
+    process.stdout.write(steadyReport({ plant, answer, units, ink: inkOf(process.stdout), trouble }));
   }
-  if (run.outcome.kind !== 'failed') return EXIT.done;
-  say(`no steady state was found; what still moves most: ${run.outcome.failure.where}`);
+  if (trouble === undefined) return EXIT.done;
+  say(trouble);
   return EXIT.stopped;
 }
