@@ -13,8 +13,9 @@ export type Kelvin = Quantity<'K'>;
 export type Pascal = Quantity<'Pa'>;
 export type KilogramPerMole = Quantity<'kg/mol'>;
 
-export type { Kind } from './units/kinds.ts';
+export type { Kind, KindEntry, UnitEntry } from './units/kinds.ts';
 export { KINDS, kindsWithUnit, unitEntry, unitsOf } from './units/kinds.ts';
+export type { ParsedQuantity, QuantityIssue } from './units/parse.ts';
 export { normaliseUnit, parseQuantity, splitQuantity } from './units/parse.ts';
 export { formatNumber, formatQuantity, formatTime } from './units/format.ts';
 export { NORMAL_MOLAR_VOLUME } from './units/factors.ts';
