@@ -28,7 +28,11 @@ function eliminationOrder(layout: Layout, leaves: ReadonlySet<number>): number[]
  * @param pattern - Of the whole Jacobian, states then auxiliary unknowns.
  * @param leaves - States whose columns hold their own diagonal alone.
  */
-export function createBorderedSolver(pattern: SparsePattern, layout: Layout, leaves: ReadonlySet<number>): ShiftedSolver {
+export function createBorderedSolver(
+  pattern: SparsePattern,
+  layout: Layout,
+  leaves: ReadonlySet<number>,
+): ShiftedSolver {
   const order = eliminationOrder(layout, leaves);
   const count = order.length;
   const place = new Int32Array(pattern.n).fill(-1);

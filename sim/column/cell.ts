@@ -83,13 +83,7 @@ function logMeanInert(bulk: number, interfacial: number): number {
 }
 
 /** Builds the evaluation of one bed's cells (one zone of it). */
-export function createCell(
-  plant: Case,
-  fluids: Fluids,
-  bed: Bed,
-  areaShare: number,
-  index: Primitives,
-): Cell {
+export function createCell(plant: Case, fluids: Fluids, bed: Bed, areaShare: number, index: Primitives): Cell {
   const { column } = plant;
   const K = fluids.solutes;
   const components = K + 1;
@@ -113,7 +107,8 @@ export function createCell(
   const gas = new Float64Array(tables.gas.columns);
   const partial = new Float64Array(components); // p* of each component, Pa
   const slope = new Float64Array(components); // dp*/dx, Pa
-  const { molarMass, liquidHeat, vapourHeat, vaporisation, soluteVolume, carrierMass, carrierHeat, equilibrium } = fluids;
+  const { molarMass, liquidHeat, vapourHeat, vaporisation, soluteVolume, carrierMass, carrierHeat, equilibrium } =
+    fluids;
   const vapours = fluids.isVolatile;
   const isPrescribed = column.hydraulics.model === 'prescribed';
   const { isothermal } = column;
@@ -214,7 +209,16 @@ export function createCell(
         out[oo + index.pressureDrop] = 0;
         hydraulic.loading = 0;
       } else {
-        hydraulics.evaluate(holdup, massFlux, gasDensity, gas[GAS.viscosity], liquidDensity, liquid[LIQUID.viscosity], conditions, hydraulic);
+        hydraulics.evaluate(
+          holdup,
+          massFlux,
+          gasDensity,
+          gas[GAS.viscosity],
+          liquidDensity,
+          liquid[LIQUID.viscosity],
+          conditions,
+          hydraulic,
+        );
         uL = hydraulic.demand;
         out[oo + index.demand] = uL * crossSection;
         const supply = hydraulic.supply * crossSection;
@@ -249,13 +253,24 @@ export function createCell(
       }
 
       // Films. The inert's log mean corrects the gas film for the flux itself.
-      films.evaluate(uL, liquidDensity, holdup, massFlux, gasDensity, liquid, gas, pressure, hydraulic.loading, forward, TG);
+      films.evaluate(
+        uL,
+        liquidDensity,
+        holdup,
+        massFlux,
+        gasDensity,
+        liquid,
+        gas,
+        pressure,
+        hydraulic.loading,
+        forward,
+        TG,
+      );
       const least = 1e-3 * pressure;
       const bulkInert = pressure * (1 - out[oo + index.vapours]);
       const interfaceInert = pressure - interfacial;
       const drift =
-        pressure /
-        logMeanInert(bulkInert > least ? bulkInert : least, interfaceInert > least ? interfaceInert : least);
+        pressure / logMeanInert(bulkInert > least ? bulkInert : least, interfaceInert > least ? interfaceInert : least);
       const perRT = (film.corrected ? drift : 1) / (GAS_CONSTANT * TG);
       const wetted = film.area * volume;
       let heatCarried = 0;

@@ -31,7 +31,7 @@ export interface ColumnJacobianParts {
 
 export interface ColumnJacobian {
   readonly pattern: SparsePattern;
-  fill(t: number, y: Float64Array, values: Float64Array): void;
+  readonly fill: (t: number, y: Float64Array, values: Float64Array) => void;
 }
 
 /** Relative step of the differences; their error is some 1e-7 of an entry. */
@@ -120,7 +120,8 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   const outerFlow = chains.map(({ layout: chain }) => {
     const p = new Int32Array(outerSize * chain.cells).fill(-1);
     for (let i = 0; i < outerSize; i++) {
-      for (let c = 0; c < chain.cells; c++) p[i * chain.cells + c] = at(layout.coreFirst + i, size + chain.firstFlow + c + 1);
+      for (let c = 0; c < chain.cells; c++)
+        p[i * chain.cells + c] = at(layout.coreFirst + i, size + chain.firstFlow + c + 1);
     }
     return p;
   });
@@ -198,7 +199,14 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     }
   };
 
-  const addPressure = (values: Float64Array, where: Int32Array, row: number, bed: number, share: number, slope: number): void => {
+  const addPressure = (
+    values: Float64Array,
+    where: Int32Array,
+    row: number,
+    bed: number,
+    share: number,
+    slope: number,
+  ): void => {
     const drops = bed + 2;
     const o = row * drops;
     for (let j = 0; j <= bed; j++) values[where[o + j]] += slope;
@@ -227,7 +235,14 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   };
 
   /** Adds slopes to the chain's inputs `u` to row r of cell c, through what the inputs owe to the core. */
-  const addInputs = (values: Float64Array, i: number, row: number, list: readonly number[], from: number, factor: number): void => {
+  const addInputs = (
+    values: Float64Array,
+    i: number,
+    row: number,
+    list: readonly number[],
+    from: number,
+    factor: number,
+  ): void => {
     const gains = inputCore[i];
     for (const column of list) {
       const j = column - layout.coreFirst;
@@ -329,7 +344,11 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     inputSlopes.fill(0);
     windowFirst = Math.max(0, Math.min(f - 1, N - 3));
     const H = components;
-    const T = isothermal ? q[Math.min(f, N - 1) * P + index.TG] : f === N ? u[ip.TG] : gasFace(i, f, index.TG, u[ip.TG]);
+    const T = isothermal
+      ? q[Math.min(f, N - 1) * P + index.TG]
+      : f === N
+        ? u[ip.TG]
+        : gasFace(i, f, index.TG, u[ip.TG]);
     const theta = T - DATUM_TEMPERATURE;
     let inert = 1;
     let h = 0;
@@ -400,7 +419,9 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     let cp = 0; // J/(m3 K) of the stream
     for (let k = 1; k <= K; k++) {
       const c =
-        f === 0 ? u[ip.concentration + k - 1] : liquidFace(i, f, index.concentration + k - 1, u[ip.concentration + k - 1]);
+        f === 0
+          ? u[ip.concentration + k - 1]
+          : liquidFace(i, f, index.concentration + k - 1, u[ip.concentration + k - 1]);
       free -= c * soluteVolume[k];
       cp += c * liquidHeat[k];
       // Slopes of flux k, of the solvent's, and of the enthalpy to this concentration.
@@ -470,7 +491,14 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   };
 
   /** Adds the slopes of a face's fluxes to the rows (first row `r0`) of a cell. */
-  const addFluxes = (values: Float64Array, i: number, c: number, r0: number, sign: number, inletList: readonly number[] | undefined): void => {
+  const addFluxes = (
+    values: Float64Array,
+    i: number,
+    c: number,
+    r0: number,
+    sign: number,
+    inletList: readonly number[] | undefined,
+  ): void => {
     const N = chains[i].layout.cells;
     for (let n = 0; n < fluxes; n++) {
       if (isothermal && n === components) continue;
@@ -481,7 +509,8 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         if (positions[i].block[(c * block + r0 + n) * 5 + j - c + 2] < 0) continue;
         addToRow(values, i, c, r0 + n, j, cellSlopes, from, sign);
       }
-      if (inletList !== undefined) addInputs(values, i, chains[i].layout.first + c * block + r0 + n, inletList, n * ip.size, sign);
+      if (inletList !== undefined)
+        addInputs(values, i, chains[i].layout.first + c * block + r0 + n, inletList, n * ip.size, sign);
     }
   };
 
@@ -547,7 +576,15 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   };
 
   /** Adds factor * slopes over the columns of cell j to the row of the flow through face f. */
-  const addToFlowRow = (values: Float64Array, i: number, f: number, j: number, slopes: Float64Array, from: number, factor: number): void => {
+  const addToFlowRow = (
+    values: Float64Array,
+    i: number,
+    f: number,
+    j: number,
+    slopes: Float64Array,
+    from: number,
+    factor: number,
+  ): void => {
     if (factor === 0) return;
     const { layout: chain } = chains[i];
     const where = positions[i];
@@ -563,7 +600,8 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       gasFace(i, g, index.TG, work.inputs[ip.TG]);
       for (let e = 0; e < 3; e++) {
         if (slopesOf[e] === 0) continue;
-        if (cells[e] >= 0) addToFlowRow(values, i, f, cells[e], local[i], (cells[e] * M + index.TG) * columns, factor * slopesOf[e]);
+        if (cells[e] >= 0)
+          addToFlowRow(values, i, f, cells[e], local[i], (cells[e] * M + index.TG) * columns, factor * slopesOf[e]);
         else addInletTemperature(values, i, f, factor * slopesOf[e]);
       }
     } else {
@@ -574,7 +612,14 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     addInlet(values, i, f, ip.TG, gasInletColumns[chains[i].layout.bed], factor);
   };
   /** Adds factor * d(chain input) to the row of face f. */
-  const addInlet = (values: Float64Array, i: number, f: number, input: number, list: readonly number[], factor: number): void => {
+  const addInlet = (
+    values: Float64Array,
+    i: number,
+    f: number,
+    input: number,
+    list: readonly number[],
+    factor: number,
+  ): void => {
     const row = size + chains[i].layout.firstFlow + f;
     for (const column of list) {
       const gain = inputCore[i][input * coreSize + column - layout.coreFirst];
@@ -600,7 +645,8 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     }
     for (let e = 0; e < 3; e++) {
       if (slopesOf[e] === 0) continue;
-      if (cells[e] >= 0) addToFlowRow(values, i, f, cells[e], L, (cells[e] * M + index.demand) * columns, factor * slopesOf[e]);
+      if (cells[e] >= 0)
+        addToFlowRow(values, i, f, cells[e], L, (cells[e] * M + index.demand) * columns, factor * slopesOf[e]);
       else addInlet(values, i, f, ip.liquidFlow, list, factor * slopesOf[e]);
     }
   };
@@ -713,7 +759,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
 
   /** What the chains' inputs and the outer rates owe to the core's states. */
   const differenceCore = (t: number, y: Float64Array, values: Float64Array): void => {
-    machinery.rates(t, y, base);
+    machinery.rates(y, base);
     chains.forEach((chain, i) => {
       savedInputs[i].set(chain.work.inputs);
     });
@@ -732,7 +778,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         gains[ip.pressureDrop * coreSize + j] = 0;
         u.set(savedInputs[i]);
       });
-      machinery.rates(t, y, moved);
+      machinery.rates(y, moved);
       y[column] = kept;
       for (let o = 0; o < outerSize; o++) {
         const slope = (moved[layout.coreFirst + o] - base[layout.coreFirst + o]) * per;
@@ -746,11 +792,11 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   };
 
   /** Slope of every outer rate to one entry of a chain's outputs (or inputs), into `moved`. */
-  const differencePort = (t: number, y: Float64Array, array: Float64Array, n: number, scale: number): void => {
+  const differencePort = (y: Float64Array, array: Float64Array, n: number, scale: number): void => {
     const kept = array[n];
     array[n] = kept + STEP * (Math.abs(kept) + scale);
     const per = 1 / (array[n] - kept);
-    machinery.rates(t, y, moved);
+    machinery.rates(y, moved);
     array[n] = kept;
     for (let o = 0; o < outerSize; o++) {
       moved[layout.coreFirst + o] = (moved[layout.coreFirst + o] - base[layout.coreFirst + o]) * per;
@@ -769,7 +815,15 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   };
 
   /** Adds slopes over a cell's columns to outer row o. */
-  const addOuter = (values: Float64Array, i: number, o: number, c: number, slopes: Float64Array, from: number, gain: number): void => {
+  const addOuter = (
+    values: Float64Array,
+    i: number,
+    o: number,
+    c: number,
+    slopes: Float64Array,
+    from: number,
+    gain: number,
+  ): void => {
     const chain = chains[i].layout;
     const where = outerBlock[i][o * chain.cells + c];
     for (let s = 0; s < block; s++) values[where + s] += gain * slopes[from + s];
@@ -794,32 +848,32 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     }
   };
 
-  const addOutputs = (t: number, y: Float64Array, values: Float64Array): void => {
+  const addOutputs = (y: Float64Array, values: Float64Array): void => {
     chains.forEach((chain, i) => {
       const { work, layout: at_, cell } = chain;
       const N = at_.cells;
       const o = work.outputs;
       const L = local[i];
       if (topReaders[i].length > 0) {
-        differencePort(t, y, o, op.gasFlow, portScale(op.gasFlow));
+        differencePort(y, o, op.gasFlow, portScale(op.gasFlow));
         for (const row of topReaders[i]) {
           values[outerTop[i][row]] += moved[layout.coreFirst + row];
         }
         for (let k = 0; k < components; k++) {
-          differencePort(t, y, o, op.y + k, portScale(op.y + k));
+          differencePort(y, o, op.y + k, portScale(op.y + k));
           gasFace(i, 0, index.y + k, 0);
           addEnd(values, i, topReaders[i], index.y + k);
         }
         if (!isothermal) {
-          differencePort(t, y, o, op.TG, portScale(op.TG));
+          differencePort(y, o, op.TG, portScale(op.TG));
           gasFace(i, 0, index.TG, 0);
           addEnd(values, i, topReaders[i], index.TG);
         }
       }
-      if (bottomReaders[i].length > 0) addBottom(t, y, values, i);
+      if (bottomReaders[i].length > 0) addBottom(y, values, i);
       if (dropReaders[i].length > 0) {
         // Weighted over the zones the gains add up to one bed's.
-        differencePort(t, y, o, op.pressureDrop, portScale(op.pressureDrop));
+        differencePort(y, o, op.pressureDrop, portScale(op.pressureDrop));
         for (const row of dropReaders[i]) values[outerDrop[at_.bed][row]] += moved[layout.coreFirst + row];
       }
       if (sumReaders[i].length > 0) {
@@ -830,7 +884,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
           [op.liquidHeld, index.holdup, volume],
         ] as const) {
           if (factor === 0) continue;
-          differencePort(t, y, o, port, portScale(port));
+          differencePort(y, o, port, portScale(port));
           for (const row of sumReaders[i]) {
             const gain = moved[layout.coreFirst + row] * factor;
             if (gain === 0) continue;
@@ -839,7 +893,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         }
       }
       if (supplyReaders[i].length > 0) {
-        differencePort(t, y, o, op.accepted, portScale(op.accepted));
+        differencePort(y, o, op.accepted, portScale(op.accepted));
         const isLimited = work.primitives[index.supply] <= work.inputs[ip.liquidFlow];
         for (const row of supplyReaders[i]) {
           const gain = moved[layout.coreFirst + row];
@@ -855,18 +909,18 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         }
       }
       if (inflowReaders[i].length > 0) {
-        differencePort(t, y, work.inputs, ip.gasFlow, plant.gas.feed.rate);
+        differencePort(y, work.inputs, ip.gasFlow, plant.gas.feed.rate);
         for (const row of inflowReaders[i]) values[outerInflow[i][row]] += moved[layout.coreFirst + row];
       }
     });
   };
 
-  const addBottom = (t: number, y: Float64Array, values: Float64Array, i: number): void => {
+  const addBottom = (y: Float64Array, values: Float64Array, i: number): void => {
     const { work, layout: chain, isPrescribed } = chains[i];
     const N = chain.cells;
     const o = work.outputs;
     const rows = bottomReaders[i];
-    differencePort(t, y, o, op.liquidFlow, portScale(op.liquidFlow));
+    differencePort(y, o, op.liquidFlow, portScale(op.liquidFlow));
     if (isPrescribed) {
       for (const row of rows) {
         const gain = moved[layout.coreFirst + row];
@@ -880,17 +934,17 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
       addEnd(values, i, rows, index.demand);
     }
     for (let k = 0; k < K; k++) {
-      differencePort(t, y, o, op.concentration + k, portScale(op.concentration + k));
+      differencePort(y, o, op.concentration + k, portScale(op.concentration + k));
       liquidFace(i, N, index.concentration + k, 0);
       addEnd(values, i, rows, index.concentration + k);
     }
     if (isothermal) return;
     // Temperature acts by itself and through the molar volume.
-    differencePort(t, y, o, op.molarVolume, portScale(op.molarVolume));
+    differencePort(y, o, op.molarVolume, portScale(op.molarVolume));
     const T = o[op.TL];
     const expansion = parts.molarVolume(T + 0.5) - parts.molarVolume(T - 0.5);
     const byVolume = rows.map((row) => moved[layout.coreFirst + row] * expansion);
-    differencePort(t, y, o, op.TL, portScale(op.TL));
+    differencePort(y, o, op.TL, portScale(op.TL));
     rows.forEach((row, n) => {
       moved[layout.coreFirst + row] += byVolume[n];
     });
@@ -912,8 +966,7 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
         addFlowRows(values, i);
       }
       addDropRows(values);
-      addOutputs(t, y, values);
+      addOutputs(y, values);
     },
   };
 }
-

@@ -76,7 +76,19 @@ function outerReads(plant: Case, layout: Layout): OuterReads[] {
       case 'carry-over':
         set(at, { supply: [0] });
         break;
-      default:
+      case 'gas-inlet':
+      case 'sump-strength':
+      case 'liquid-flow':
+      case 'gas-flow':
+      case 'sump-level':
+      case 'sump-temperature':
+      case 'liquid-inlet-temperature':
+      case 'gas-inlet-temperature':
+      case 'distributor-volume':
+      case 'flood-approach':
+      case 'pump-speed':
+      case 'make-up-flow':
+      case 'bleed-flow':
         break;
     }
   });
@@ -108,24 +120,28 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
   const builder = createPatternBuilder(size + layout.auxiliary);
   const liquidRows = components + 1;
   const span = (r: number, c: number, cells: number): readonly [number, number] =>
-    r < liquidRows ? [Math.max(0, c - 2), Math.min(cells - 1, c + 1)] : [Math.max(0, c - 1), Math.min(cells - 1, c + 2)];
+    r < liquidRows
+      ? [Math.max(0, c - 2), Math.min(cells - 1, c + 1)]
+      : [Math.max(0, c - 1), Math.min(cells - 1, c + 2)];
   const pressures = (b: number): number[] => [layout.topPressure, ...layout.pressureDrop.slice(0, b + 1)];
   const states = (at: number): number[] => Array.from({ length: components + 1 }, (_, k) => at + k);
   const gasInletColumns = plant.column.beds.map((_, b) => {
     const share = layout.gasShare[b] >= 0 ? [layout.gasShare[b]] : [];
     if (b === beds - 1) {
-      return [layout.gasFlow, layout.valves['gas-inlet'], layout.valves.diversion, ...share, layout.topPressure, ...layout.pressureDrop];
+      return [
+        layout.gasFlow,
+        layout.valves['gas-inlet'],
+        layout.valves.diversion,
+        ...share,
+        layout.topPressure,
+        ...layout.pressureDrop,
+      ];
     }
     return [...states(layout.plenum[b + 1]), ...share, layout.topPressure, ...layout.pressureDrop.slice(0, b + 2)];
   });
   const liquidInletColumns = plant.column.beds.map((_, b) => {
     if (b > 0 || !passThrough) return states(layout.vessel[b]);
-    return [
-      ...layout.pumpSpeed,
-      layout.valves.solvent,
-      layout.valves['emergency-water'],
-      ...states(layout.sump),
-    ];
+    return [...layout.pumpSpeed, layout.valves.solvent, layout.valves['emergency-water'], ...states(layout.sump)];
   });
   for (const chain of layout.chains) {
     const { bed, cells, first, firstFlow } = chain;

@@ -69,7 +69,8 @@ export function createColumn(plant: Case, options: ColumnOptions = {}): Column {
   const { distribution } = plant.column;
   const chains: Chain[][] = plant.column.beds.map(() => []);
   for (const chain of layout.chains) {
-    const share = distribution === undefined ? 1 : chain.zone === 0 ? distribution.areaShare : 1 - distribution.areaShare;
+    const share =
+      distribution === undefined ? 1 : chain.zone === 0 ? distribution.areaShare : 1 - distribution.areaShare;
     const cell = createCell(plant, fluids, plant.column.beds[chain.bed], share, index);
     chains[chain.bed].push(
       createChain({ ...settings, layout: chain, cell, fluids, index, inputs, outputs, molarVolume: volumeTable }),
@@ -179,7 +180,7 @@ export function createColumn(plant: Case, options: ColumnOptions = {}): Column {
       passGas(y, b);
       for (const chain of chains[b]) chain.balance(y, dydt);
     }
-    machinery.rates(t, y, dydt);
+    machinery.rates(y, dydt);
   };
 
   const base = new Float64Array(layout.size);

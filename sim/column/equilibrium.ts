@@ -3,6 +3,7 @@
  * times an activity that depends on composition alone, or a table of the user's that does not separate.
  */
 import type { Antoine, Equilibrium } from '../case/case.ts';
+import { GAS_CONSTANT } from '../properties/constants.ts';
 import { vanLaarHenryLaw, vanLaarLaw } from '../properties/equilibrium/van-laar.ts';
 import { henryLaw } from '../properties/equilibrium/henry.ts';
 import { tableLaw } from '../properties/equilibrium/table.ts';
@@ -85,7 +86,7 @@ export function equilibriumOf(
       const henry = henryLaw({ H: equilibrium.solubility, B: equilibrium.temperatureFactor }, concentration);
       const scale: TemperatureFunction = {
         value: (T) => henry.referencePressure(T),
-        relativeSlope: (T) => henry.vaporisationEnthalpy(T),
+        relativeSlope: (T) => henry.vaporisationEnthalpy(T) / (GAS_CONSTANT * T * T),
       };
       return separable(vanLaarHenryLaw(equilibrium, scale), 'activity');
     }
@@ -97,7 +98,11 @@ export function equilibriumOf(
       return scaleOnly('ratio', () => equilibrium.m);
     case 'table':
       return fromTable(
-        tableLaw({ T: equilibrium.temperature, x: equilibrium.moleFraction.slice(1), p: equilibrium.pressure.map((row) => row.slice(1)) }),
+        tableLaw({
+          T: equilibrium.temperature,
+          x: equilibrium.moleFraction.slice(1),
+          p: equilibrium.pressure.map((row) => row.slice(1)),
+        }),
       );
   }
 }

@@ -107,7 +107,14 @@ export function createFilmLaw(plant: Case, fluids: Fluids, bed: Bed, areaShare: 
   const { transfer } = column;
   const a = packing.area;
   const K = fluids.solutes;
-  const state: FilmState = { area: 0, gas: new Float64Array(K + 1), liquid: new Float64Array(K + 1), heat: 0, overall: 0, corrected: transfer.model !== 'measured' };
+  const state: FilmState = {
+    area: 0,
+    gas: new Float64Array(K + 1),
+    liquid: new Float64Array(K + 1),
+    heat: 0,
+    overall: 0,
+    corrected: transfer.model !== 'measured',
+  };
   const usual = packing.nominalSize < ONDA_SMALL ? 2 : 5.23;
   const constants: FilmConstants =
     transfer.model === 'onda'
@@ -161,7 +168,8 @@ export function createFilmLaw(plant: Case, fluids: Fluids, bed: Bed, areaShare: 
           share *
           Math.exp(
             measured.gasExponent * Math.log(Math.max(molarFlow, LEAST_SHARE * designGas) / designGas) +
-              measured.liquidExponent * Math.log(Math.max(uL * crossSection, LEAST_SHARE * designLiquid) / designLiquid),
+              measured.liquidExponent *
+                Math.log(Math.max(uL * crossSection, LEAST_SHARE * designLiquid) / designLiquid),
           );
         state.overall = measured.overall * rates;
         if (measured.overall === 0) {

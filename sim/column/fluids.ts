@@ -182,17 +182,21 @@ export function createFluidTables(fluids: Fluids, bed: Bed, film: FilmConstants)
     Math.pow(area * mu(T), -0.1) *
     Math.pow(area / (rho(T) ** 2 * g), -0.05) *
     Math.pow(rho(T) * sigma(T) * area, -0.2);
-  const liquidFilm = (D: (T: number) => number) => (T: number): number =>
-    film.liquid *
-    Math.pow(area * nominalSize, 0.4) *
-    Math.pow(mu(T), -2 / 3) *
-    Math.pow(mu(T) / (rho(T) * D(T)), -0.5) *
-    Math.cbrt((mu(T) * g) / rho(T));
+  const liquidFilm =
+    (D: (T: number) => number) =>
+    (T: number): number =>
+      film.liquid *
+      Math.pow(area * nominalSize, 0.4) *
+      Math.pow(mu(T), -2 / 3) *
+      Math.pow(mu(T) / (rho(T) * D(T)), -0.5) *
+      Math.cbrt((mu(T) * g) / rho(T));
   const gasGroup = film.gas * area * Math.pow(area * nominalSize, -2);
   const muG = fluids.gasViscosity;
   const density = (T: number): number => (TABLE_PRESSURE * fluids.carrierMass) / (GAS_CONSTANT * T);
-  const gasFilm = (D: (T: number) => number) => (T: number): number =>
-    gasGroup * D(T) * Math.pow(area * muG(T), -0.7) * Math.cbrt(muG(T) / (density(T) * D(T)));
+  const gasFilm =
+    (D: (T: number) => number) =>
+    (T: number): number =>
+      gasGroup * D(T) * Math.pow(area * muG(T), -0.7) * Math.cbrt(muG(T) / (density(T) * D(T)));
   const heat = (T: number): number => {
     const cp = fluids.carrierHeat / fluids.carrierMass;
     const prandtl = (muG(T) * cp) / fluids.gasConductivity(T);

@@ -41,7 +41,9 @@ function staticHoldupOf(plant: Case, fluids: Fluids, bed: Bed): number {
   const { hydraulics } = plant.column;
   if (hydraulics.model !== 'stichlmair-bravo-fair' && hydraulics.model !== 'billet-schultes') return 0;
   const T = plant.liquid.feed.temperature;
-  return hydraulics.staticHoldup ?? engelStaticHoldup(bed.packing.area, fluids.solventDensity(T), fluids.surfaceTension(T));
+  return (
+    hydraulics.staticHoldup ?? engelStaticHoldup(bed.packing.area, fluids.solventDensity(T), fluids.surfaceTension(T))
+  );
 }
 
 /** Builds the law; the static hold-up is taken at the liquid feed's temperature. */
@@ -53,9 +55,14 @@ export function createHydraulicLaw(plant: Case, fluids: Fluids, bed: Bed): Hydra
     const k = hydraulics.model === 'power-law' ? hydraulics.k : 0;
     const n = hydraulics.model === 'power-law' ? hydraulics.n : 1;
     const law = powerLawDrainage(k, n, flooding.fullShare * clean, clean);
-    return { evaluate: (h, _Gm, _rhoG, _muG, _rhoL, _muL, _conditions, out) => { law.evaluate(h, 0, 0, out); } };
+    return {
+      evaluate: (h, _Gm, _rhoG, _muG, _rhoL, _muL, _conditions, out) => {
+        law.evaluate(h, 0, 0, out);
+      },
+    };
   }
-  if (hydraulics.model === 'billet-schultes') return createBilletDrainage(plant, fluids, bed, staticHoldupOf(plant, fluids, bed));
+  if (hydraulics.model === 'billet-schultes')
+    return createBilletDrainage(plant, fluids, bed, staticHoldupOf(plant, fluids, bed));
   const staticHoldup = staticHoldupOf(plant, fluids, bed);
   const friction = packing.friction ?? { C1: 0, C2: 0, C3: 0 };
   const { C1, C2, C3 } = friction;

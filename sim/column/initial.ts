@@ -102,7 +102,15 @@ export function fillColumn(column: Column, start: StartingState, y: Float64Array
   for (const zones of column.chains) {
     for (const chain of zones) {
       for (let c = 0; c < chain.layout.cells; c++) {
-        fillCell(fluids, chain, machinery.molarVolume, layout.block, c, { holdup, TL, x, TG, y: yGas, pressure: topPressure }, y);
+        fillCell(
+          fluids,
+          chain,
+          machinery.molarVolume,
+          layout.block,
+          c,
+          { holdup, TL, x, TG, y: yGas, pressure: topPressure },
+          y,
+        );
       }
     }
   }
@@ -125,7 +133,8 @@ export function fillColumn(column: Column, start: StartingState, y: Float64Array
   y[layout.fanSpeed] = start.gasOn && modes.fanRunning ? 1 : 0;
   y[layout.pumpSpeed[0]] = modes.pumpRunning[0] ? modes.channels.pumpSpeed : 0;
   y[layout.pumpSpeed[1]] = modes.pumpRunning[1] ? modes.channels.pumpSpeed : 0;
-  for (const name of Object.keys(layout.valves) as (keyof typeof layout.valves)[]) y[layout.valves[name]] = modes.valveCommand[name];
+  for (const name of Object.keys(layout.valves) as (keyof typeof layout.valves)[])
+    y[layout.valves[name]] = modes.valveCommand[name];
   plant.controllers.forEach((controller, i) => {
     y[layout.controllers[i]] = controller.manualOutput;
     const valve = controller.output === 'solvent-valve' ? 'solvent' : controller.output;

@@ -42,7 +42,12 @@ export interface Layout {
   readonly fanSpeed: number;
   readonly pumpSpeed: readonly [number, number];
   /** Valve positions. */
-  readonly valves: Readonly<Record<'solvent' | 'drain' | 'gas-inlet' | 'diversion' | 'make-up' | 'bleed' | 'emergency-water' | 'gas-damper', number>>;
+  readonly valves: Readonly<
+    Record<
+      'solvent' | 'drain' | 'gas-inlet' | 'diversion' | 'make-up' | 'bleed' | 'emergency-water' | 'gas-damper',
+      number
+    >
+  >;
   readonly controllers: readonly number[];
   /** Lag state of each instrument; -1 when it has no lag. */ readonly instruments: readonly number[];
   /** Accumulators, see `accumulators.ts`: first of each group. */

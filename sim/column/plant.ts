@@ -70,7 +70,7 @@ export interface Plant {
   /** Fills the chains' inputs (all but the gas flow of upper beds) and the flows. */
   prepare(t: number, y: Float64Array): void;
   /** Writes the rates of core and accumulators; the chains' outputs must be there. */
-  rates(t: number, y: Float64Array, dydt: Float64Array): void;
+  rates(y: Float64Array, dydt: Float64Array): void;
   /** Gas space under bed b - 1 (b >= 1). */ readonly plenums: readonly (Plenum | undefined)[];
   /** Volumes at the design rate, m3. */ readonly vesselVolume: readonly number[];
   readonly vesselMetal: readonly number[];
@@ -119,7 +119,8 @@ export function createPlant(parts: PlantParts): Plant {
   const vessels = vesselVolume.map(newVessel);
   const sump = newVessel();
   const plenums = column.beds.map((_, b) => (b === 0 ? undefined : createPlenum(plant, fluids)));
-  const zoneShares = column.distribution === undefined ? [1] : [column.distribution.areaShare, 1 - column.distribution.areaShare];
+  const zoneShares =
+    column.distribution === undefined ? [1] : [column.distribution.areaShare, 1 - column.distribution.areaShare];
   const isRecirculated = liquid.mode === 'recirculated';
   const settings: PiSettings[] = plant.controllers.map((c) => ({
     gain: c.gain,
@@ -207,7 +208,8 @@ export function createPlant(parts: PlantParts): Plant {
   const liquidSupply = (y: Float64Array): void => {
     const speed = Math.max(y[layout.pumpSpeed[0]], y[layout.pumpSpeed[1]]);
     const idleLeak = 1 - channels.nonReturnValveLeak;
-    let rate = liquid.feed.rate * pumpDelivery(speed, liquid.pumps.staticHeadShare, y[layout.valves.solvent]) * idleLeak;
+    let rate =
+      liquid.feed.rate * pumpDelivery(speed, liquid.pumps.staticHeadShare, y[layout.valves.solvent]) * idleLeak;
     if (!isRecirculated) {
       freshLiquid(flows.delivery, rate, channels.liquidTemperature, channels.liquidComposition);
     } else {
@@ -235,7 +237,12 @@ export function createPlant(parts: PlantParts): Plant {
     }
     if (liquid.makeUp !== undefined) {
       const m = liquid.makeUp;
-      freshLiquid(flows.makeUp, m.capacity * y[layout.valves['make-up']], channels.makeUpTemperature, channels.makeUpComposition);
+      freshLiquid(
+        flows.makeUp,
+        m.capacity * y[layout.valves['make-up']],
+        channels.makeUpTemperature,
+        channels.makeUpComposition,
+      );
     }
     const open = gravityOutflow(level() / liquid.sump.normalLevel);
     flows.drain = isRecirculated ? 0 : liquid.sump.drain.capacity * y[layout.valves.drain] * open;
@@ -247,7 +254,8 @@ export function createPlant(parts: PlantParts): Plant {
 
   const prepare = (t: number, y: Float64Array): void => {
     for (let b = 0; b < beds; b++) {
-      if (vesselVolume[b] > 0) readVessel(fluids, molarVolume, y, layout.vessel[b], vesselMetal[b], vesselVolume[b], vessels[b]);
+      if (vesselVolume[b] > 0)
+        readVessel(fluids, molarVolume, y, layout.vessel[b], vesselMetal[b], vesselVolume[b], vessels[b]);
     }
     readVessel(fluids, molarVolume, y, layout.sump, sumpMetal, sumpVolume, sump);
     gasSupply(y);
@@ -521,20 +529,14 @@ export function createPlant(parts: PlantParts): Plant {
     flows.coolerDuty = flows.delivery.rate * capacityFlow * (coolerIn - before);
   };
 
+  /** Quantities that controllers read without a lag come from the core alone, before the chains are evaluated. */
   const coreValue = (instrument: Instrument, y: Float64Array): number => {
-    const { measured } = instrument;
-    switch (measured.quantity) {
-      case 'sump-level':
-        return level();
-      case 'sump-temperature':
-        return sump.temperature;
-      case 'gas-flow':
-        return flows.gasToBed;
-      case 'liquid-flow':
-        return flows.delivery.rate;
-      default:
-        return trueValue(instrument, y);
-    }
+    const { quantity } = instrument.measured;
+    if (quantity === 'sump-level') return level();
+    if (quantity === 'sump-temperature') return sump.temperature;
+    if (quantity === 'gas-flow') return flows.gasToBed;
+    if (quantity === 'liquid-flow') return flows.delivery.rate;
+    return trueValue(instrument, y);
   };
 
   const liquidFraction = (vessel: { concentration: Float64Array; molarVolume: number }, k: number): number => {
@@ -607,8 +609,7 @@ export function createPlant(parts: PlantParts): Plant {
     }
   };
 
-  const rates = (t: number, y: Float64Array, dydt: Float64Array): void => {
-    void t;
+  const rates = (y: Float64Array, dydt: Float64Array): void => {
     vesselRates(y, dydt);
     plenumRates(dydt);
     for (let b = 0; b < beds; b++) {
@@ -627,7 +628,13 @@ export function createPlant(parts: PlantParts): Plant {
     valveRates(y, dydt);
     for (let i = 0; i < plant.controllers.length; i++) {
       const mode = modes.controllers[i];
-      dydt[layout.controllers[i]] = integralRate(settings[i], y[layout.controllers[i]], errorsNow[i], mode.automatic, mode.manualOutput);
+      dydt[layout.controllers[i]] = integralRate(
+        settings[i],
+        y[layout.controllers[i]],
+        errorsNow[i],
+        mode.automatic,
+        mode.manualOutput,
+      );
     }
     instrumentRates(y, dydt);
     accumulate(dydt);

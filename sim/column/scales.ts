@@ -94,7 +94,8 @@ export function stateScales(
     }
   }
   const heatFlow =
-    plant.gas.feed.rate * fluids.carrierHeat * TYPICAL_SPAN + plant.liquid.feed.rate * perVolume * fluids.liquidHeat[0] * TYPICAL_SPAN;
+    plant.gas.feed.rate * fluids.carrierHeat * TYPICAL_SPAN +
+    plant.liquid.feed.rate * perVolume * fluids.liquidHeat[0] * TYPICAL_SPAN;
   for (const group of [layout.netIn, layout.grossIn]) {
     scale[group + components] = plant.gas.feed.rate * hours;
     scale[group + components + 1] = heatFlow * hours;
@@ -129,7 +130,11 @@ function instrumentScale(plant: Case, measured: Case['instruments'][number]['mea
     case 'pump-speed':
     case 'flood-approach':
       return 1;
-    default:
-      return TYPICAL_SPAN; // temperatures
+    case 'sump-temperature':
+    case 'liquid-inlet-temperature':
+    case 'liquid-outlet-temperature':
+    case 'gas-inlet-temperature':
+    case 'gas-outlet-temperature':
+      return TYPICAL_SPAN;
   }
 }

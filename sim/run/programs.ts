@@ -27,7 +27,7 @@ export interface Programs {
 
 /** Reads and writes a channel's value. */
 function access(values: ChannelValues, channel: Channel): { get(): number; set(v: number): void } {
-  const field = <K extends keyof ChannelValues>(key: K) => ({
+  const field = (key: keyof ChannelValues) => ({
     get: () => values[key] as number,
     set: (v: number) => {
       (values as unknown as Record<string, number>)[key] = v;

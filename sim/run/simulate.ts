@@ -28,7 +28,11 @@ export interface Intervention {
 
 /** Why a run ended before its end. */
 export type RunFailure =
-  | { readonly kind: 'integration'; readonly failure: StepFailure; /** In words: which part of the plant. */ readonly where: string }
+  | {
+      readonly kind: 'integration';
+      readonly failure: StepFailure;
+      /** In words: which part of the plant. */ readonly where: string;
+    }
   | { readonly kind: 'no-steady-state'; readonly residual: number; readonly where: string };
 
 /** How a run stands. */
@@ -57,7 +61,10 @@ export interface SavedRun {
 }
 
 /** Modes as plain data; channels come back from the programs and the case. */
-type SavedModes = Pick<PlantModes, 'pumpRunning' | 'pumpAvailable' | 'fanRunning' | 'fanAvailable' | 'valveCommand' | 'valveStuck'> & {
+type SavedModes = Pick<
+  PlantModes,
+  'pumpRunning' | 'pumpAvailable' | 'fanRunning' | 'fanAvailable' | 'valveCommand' | 'valveStuck'
+> & {
   readonly controllers: PlantModes['controllers'];
 };
 
@@ -112,7 +119,11 @@ export function createRun(plant: Case, scenario: Scenario, saved?: SavedRun): Ru
     fitDuct(column); // a fan that is too small is said by the plant check; the run shows what it gives
     const start = initialState(column, scenario.initial);
     if (start.kind === 'failed') {
-      run.fail({ kind: 'integration', failure: start.failure, where: stateName(plant, column, start.failure.component) });
+      run.fail({
+        kind: 'integration',
+        failure: start.failure,
+        where: stateName(plant, column, start.failure.component),
+      });
     } else if (start.kind === 'not-steady') {
       run.fail({ kind: 'no-steady-state', residual: start.residual, where: stateName(plant, column, start.state) });
     }
@@ -143,7 +154,6 @@ class RunCore implements Run {
   readonly #rates: Float64Array;
   #pieceStart = 0;
   #nextRecord = 0;
-  #duct = 0;
 
   constructor(
     plant: Case,
@@ -197,7 +207,6 @@ class RunCore implements Run {
   /** First moment: signals at rest, comparators read, steps due at time 0 carried out. */
   begin(y: Float64Array): void {
     this.initial.set(y);
-    this.#duct = this.column.machinery.ductResistance;
     this.#stepper.start(0, y);
     this.#beginPiece(0);
     this.#evaluate(0, y);
@@ -257,7 +266,11 @@ class RunCore implements Run {
     const result = stepper.step(stop);
     if (result.kind === 'failed') {
       this.#evaluate(stepper.t, stepper.y);
-      this.fail({ kind: 'integration', failure: result.failure, where: stateName(this.plant, this.column, result.failure.component) });
+      this.fail({
+        kind: 'integration',
+        failure: result.failure,
+        where: stateName(this.plant, this.column, result.failure.component),
+      });
       return;
     }
     const to = stepper.t;
@@ -370,13 +383,24 @@ class RunCore implements Run {
     return changed;
   }
 
-  #carryOut(t: number, actions: readonly Action[], role: 'upset' | 'action' | 'interlock', tag: string, text: string): void {
+  #carryOut(
+    t: number,
+    actions: readonly Action[],
+    role: 'upset' | 'action' | 'interlock',
+    tag: string,
+    text: string,
+  ): void {
     this.events.push({ time: t, kind: role === 'interlock' ? 'interlock' : role, tag, text });
     this.interventions.push({ time: t, actions });
     for (const action of actions) {
       const refused = carryOut(action, t, this.#targets);
       if (refused !== undefined) {
-        this.events.push({ time: t, kind: action.kind === 'interlock' ? 'interlock-refused' : 'command-refused', tag, text: refused });
+        this.events.push({
+          time: t,
+          kind: action.kind === 'interlock' ? 'interlock-refused' : 'command-refused',
+          tag,
+          text: refused,
+        });
       }
     }
   }
@@ -388,7 +412,13 @@ class RunCore implements Run {
     this.#stepper.start(t, y);
     this.#evaluate(t, y);
     // Signals that jump with the plant: direct ones, stuck ones, sampled ones.
-    this.#readComparators(t, (i) => this.column.layout.instruments[i] < 0 || this.#signals.modes[i].fault !== 'none' || this.#signals.modes[i].bias !== 0);
+    this.#readComparators(
+      t,
+      (i) =>
+        this.column.layout.instruments[i] < 0 ||
+        this.#signals.modes[i].fault !== 'none' ||
+        this.#signals.modes[i].bias !== 0,
+    );
     this.#record(t, y);
   }
 
@@ -458,7 +488,8 @@ class RunCore implements Run {
   #shownAt(i: number, t: number): number {
     const mode = this.#signals.modes[i];
     // A stuck or sampled signal needs no look at the plant.
-    if (mode.fault !== 'none' || this.plant.instruments[i].sampleInterval !== undefined) return this.#signals.shown(i, t, 0);
+    if (mode.fault !== 'none' || this.plant.instruments[i].sampleInterval !== undefined)
+      return this.#signals.shown(i, t, 0);
     return this.#signals.shown(i, t, this.#signals.slot[i] >= 0 ? 0 : this.#rawAt(i, t));
   }
   #controllerOutput(i: number, t: number): number {

@@ -42,9 +42,9 @@ export interface SeparableLaw extends EquilibriumLaw {
 /** A function of temperature and its relative slope. */
 export interface TemperatureFunction {
   /** Value at T. */
-  value(T: number): number;
+  readonly value: (T: number) => number;
   /** d ln value / dT, 1/K. */
-  relativeSlope(T: number): number;
+  readonly relativeSlope: (T: number) => number;
 }
 
 /** Builds a separable law from its two factors. */
