@@ -5,6 +5,7 @@ import * as v from 'valibot';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 
 import { resultSchema, type ResultDocument } from '../../sim/run/result-schema.ts';
+import { changed } from '../case/support.ts';
 import { buildBedwave, tinyCase, type Bedwave } from './support.ts';
 
 let bedwave: Bedwave;
@@ -77,6 +78,12 @@ describe('run', () => {
       settings: { segments: [6], rtol: 1e-4, method: 'rodas5p', seed: 7 },
       outcome: { kind: 'completed', time: 10 },
     });
+  });
+
+  test('compares with twice the segments where asked', () => {
+    const { code, out } = bedwave.run('run', 'tiny.json', '--until', '8 s', '--estimate');
+    expect(code).toBe(0);
+    expect(out).toMatch(/Twice the segments\n +figure +N = 8 +2 N = 16/);
   });
 
   test('prints other units where asked', () => {
@@ -160,5 +167,12 @@ describe('steady and check', () => {
     const { code, out } = bedwave.run('check', 'tiny.json');
     expect(code).toBe(0);
     expect(out).toMatch(/no errors/);
+  });
+
+  test('a plant that floods is no sound case', () => {
+    bedwave.write('narrow.json', changed('column/diameter', '0.6 m'));
+    const { code, err } = bedwave.run('check', 'narrow.json');
+    expect(code).toBe(2);
+    expect(err).toMatch(/^bedwave: column\.beds\[0\]: expected a bed that does not flood/);
   });
 });

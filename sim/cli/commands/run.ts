@@ -1,6 +1,7 @@
 /** `bedwave run`: computes a scenario and says what came out. */
 import {
   choicesOf,
+  convergenceOf,
   createRun,
   measuredSentence,
   readSaved,
@@ -9,6 +10,7 @@ import {
   writeResult,
   writeSaved,
   type Case,
+  type ConvergenceBlock,
   type ResultDocument,
   type Run,
   type SavedFile,
@@ -37,7 +39,7 @@ export function runCommand(path: string, options: Options): number {
   checkSaving(scenario, options, saved);
   const run = createRun(plant, scenario, saved?.run);
   go(run, loaded, options, [path, ...(options.resume === undefined ? [] : [options.resume])]);
-  const result = resultOf(run, { caseText: loaded.text });
+  const result = resultOf(run, { caseText: loaded.text, ...estimate(run, options) });
   output(result, run, options, [path]);
   return exitCode(result, options.hold ?? []);
 }
@@ -124,6 +126,15 @@ function go(run: Run, { text }: LoadedCase, { save, profiles }: Options, inputs:
   run.advance(duration, onStep);
   progress.finish();
   if (save !== undefined) say(`saved the run at ${save.time} s to ${save.file}`);
+}
+
+/** The same run on twice the segments, where asked and where there is a run to compare. */
+function estimate(run: Run, options: Options): { convergence?: ConvergenceBlock } {
+  if (options.estimate !== true || run.outcome.kind === 'failed') return {};
+  const progress = progressLine(`${run.scenario.id}, twice the segments,`, run.scenario.duration);
+  const convergence = convergenceOf(run, (t) => progress.update(t));
+  progress.finish();
+  return { convergence };
 }
 
 /** Document and table to their files, or one of them, or else the report, to standard output. */
