@@ -26,7 +26,14 @@ export type { BedProfile, Profile, ProfileRow } from './run/profiles.ts';
 export { caseHash, resultOf, writeResult } from './run/result.ts';
 export type { ResultExtras } from './run/result.ts';
 export { resultSchema } from './run/result-schema.ts';
-export type { Answers, ConvergenceBlock, LimitAnswer, ResultDocument, SetpointCrossing } from './run/result-schema.ts';
+export type {
+  Answers,
+  ConvergenceBlock,
+  LimitAnswer,
+  ResultDocument,
+  SecondOpinionBlock,
+  SetpointCrossing,
+} from './run/result-schema.ts';
 export { writeCsv } from './run/result-csv.ts';
 export { CAUTION, measuredSentence } from './run/sentence.ts';
 export { headlineFigures, headlineLimit } from './run/answers.ts';
@@ -38,5 +45,6 @@ export type { RunChoices, SavedFile } from './run/saved-file.ts';
 export { steadyAnswers, steadyScenario } from './run/steady-answers.ts';
 export type { BedAnswer, OutletAnswer, SteadyAnswer, SteadyLimit, TransferAnswer } from './run/steady-answers.ts';
 export { checkPlant } from './run/plant-check.ts';
+export { secondOpinionOf } from './run/second-opinion.ts';
 export { convergenceOf } from './run/convergence.ts';
 export { VERSION } from './run/version.ts';

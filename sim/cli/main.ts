@@ -35,7 +35,18 @@ function program(finish: (code: number) => void): Command {
     outputError: (text, write) => write(`bedwave: ${text.replace(/^error: /, '')}`),
   });
   const run = root.command('run <case>').description('compute a scenario of a case and say what comes out');
-  addOptions(run, ['scenario', 'list', 'until', 'hold', 'json', 'csv', 'units', 'profiles', 'estimate']);
+  addOptions(run, [
+    'scenario',
+    'list',
+    'until',
+    'hold',
+    'json',
+    'csv',
+    'units',
+    'profiles',
+    'estimate',
+    'secondOpinion',
+  ]);
   addOptions(run, ['save', 'resume', 'segments', 'tolerance', 'method', 'noise', 'seed']);
   run.action((path: string, options: Options) => finish(runCommand(path, options)));
   const steady = root

@@ -96,14 +96,16 @@ function isFlat({ peak, initial }: LimitAnswer): boolean {
 function averageRow(answer: LimitAnswer, text: (value: number) => string, ink: Ink): string[] {
   const { average, averaging } = answer;
   const peak = average?.peak ?? undefined;
-  const shown = answer.shown[0]?.average?.peak ?? undefined;
+  const seen = answer.shown[0]?.average ?? undefined;
+  const shown = seen?.peak ?? undefined;
+  const invalid = seen !== undefined && seen.invalidTime > 0 ? ` (invalid for ${formatTime(seen.invalidTime)})` : '';
   return [
     `  ${formatTime(averaging.window ?? 0)} ${averaging.kind} average`,
     '',
     '',
     peak === undefined ? 'invalid' : text(peak.value),
     peak === undefined ? '' : clock(peak.time),
-    shown === undefined ? '-' : text(shown.value),
+    shown === undefined ? `-${invalid}` : `${text(shown.value)}${invalid}`,
     beyond(average?.over.total ?? 0),
     verdict(answer, ink),
   ];

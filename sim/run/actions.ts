@@ -84,7 +84,11 @@ function isRunning(tag: string, { plant, modes }: ActionTargets): boolean {
   return modes.fanRunning;
 }
 
-function machine(tag: string, command: 'start' | 'stop' | 'lock-out' | 'release', targets: ActionTargets): string | undefined {
+function machine(
+  tag: string,
+  command: 'start' | 'stop' | 'lock-out' | 'release',
+  targets: ActionTargets,
+): string | undefined {
   const { plant, modes } = targets;
   const pump = tag === plant.liquid.pumps.duty ? 0 : tag === plant.liquid.pumps.standby ? 1 : undefined;
   const available = pump !== undefined ? modes.pumpAvailable[pump] : modes.fanAvailable;

@@ -10,7 +10,7 @@ import { findSteady, type SteadyOutcome } from './steady.ts';
 const GUESS = 0.04;
 
 /** Puts the machines where the initial state has them. */
-function setModes(column: Column, initial: Scenario['initial']): void {
+export function setModes(column: Column, initial: Scenario['initial']): void {
   const { modes } = column;
   if (initial === 'steady') return;
   modes.valveCommand['gas-inlet'] = 0;

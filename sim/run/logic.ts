@@ -42,7 +42,12 @@ export interface Logic {
   /** Next time at which a delay runs out, after t; Infinity for none. */
   nextDue(t: number): number;
   postpone(time: number, actions: readonly Action[], text: string): void;
-  command(tag: string, command: 'reset' | 'bypass' | 'restore', t: number, emit: (event: RunEvent) => void): string | undefined;
+  command(
+    tag: string,
+    command: 'reset' | 'bypass' | 'restore',
+    t: number,
+    emit: (event: RunEvent) => void,
+  ): string | undefined;
   isTripped(tag: string): boolean;
   save(): LogicState;
   restore(state: LogicState): void;
@@ -84,11 +89,13 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
   });
   const inService = (tag: string): boolean =>
     scenario.interlocksInService === 'all' || scenario.interlocksInService.includes(tag);
-  const interlocks = plant.interlocks.filter((i) => inService(i.tag)).map((interlock) => ({
-    interlock,
-    conditions: interlock.conditions.map(ofCondition),
-    permissive: interlock.resetPermissive === undefined ? -1 : ofCondition(interlock.resetPermissive),
-  }));
+  const interlocks = plant.interlocks
+    .filter((i) => inService(i.tag))
+    .map((interlock) => ({
+      interlock,
+      conditions: interlock.conditions.map(ofCondition),
+      permissive: interlock.resetPermissive === undefined ? -1 : ofCondition(interlock.resetPermissive),
+    }));
   const steps = scenario.steps.map((step) => ({
     step,
     condition: step.trigger.kind === 'condition' ? ofCondition(step.trigger.condition) : -1,
@@ -119,7 +126,13 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
     alarms.forEach(({ alarm, on, off }, i) => {
       if (!alarmActive[i] && holds(on, t)) {
         alarmActive[i] = true;
-        emit({ time: t, kind: 'alarm', tag: alarm.tag, text: `${alarm.tag} annunciates (${alarm.priority} priority)`, value: alarm.setpoint });
+        emit({
+          time: t,
+          kind: 'alarm',
+          tag: alarm.tag,
+          text: `${alarm.tag} annunciates (${alarm.priority} priority)`,
+          value: alarm.setpoint,
+        });
       } else if (alarmActive[i] && holds(off, t)) {
         alarmActive[i] = false;
         emit({ time: t, kind: 'alarm-cleared', tag: alarm.tag, text: `${alarm.tag} returns to normal` });
@@ -140,7 +153,12 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
       acted[i] = true;
       const by = instrumentTag(conditions[0]);
       if (bypassed[i]) {
-        emit({ time: t, kind: 'interlock-bypassed', tag: interlock.tag, text: `${interlock.tag} would act on ${by} but is bypassed` });
+        emit({
+          time: t,
+          kind: 'interlock-bypassed',
+          tag: interlock.tag,
+          text: `${interlock.tag} would act on ${by} but is bypassed`,
+        });
         return;
       }
       if (interlock.kind === 'trip') {
@@ -186,7 +204,8 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
           due.push({ actions: step.actions, role: step.role, tag: step.id, text: step.label });
         });
       }
-      for (const p of postponed) if (p.time <= t) due.push({ actions: p.actions, role: 'action', tag: '', text: p.text });
+      for (const p of postponed)
+        if (p.time <= t) due.push({ actions: p.actions, role: 'action', tag: '', text: p.text });
       postponed = postponed.filter((p) => p.time > t);
       return due;
     },
@@ -202,7 +221,8 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
       steps.forEach(({ step }, i) => {
         if (!Number.isNaN(fired[i])) return;
         if (step.trigger.kind === 'time') consider(step.trigger.at);
-        else if (step.trigger.kind === 'after') consider(fired[stepIndex.get(step.trigger.after) ?? -1] + step.trigger.delay);
+        else if (step.trigger.kind === 'after')
+          consider(fired[stepIndex.get(step.trigger.after) ?? -1] + step.trigger.delay);
       });
       for (const p of postponed) consider(p.time);
       return next;
@@ -219,7 +239,8 @@ export function createLogic(plant: Case, scenario: Scenario): Logic {
         const { permissive, conditions, interlock } = interlocks[i];
         const votes = conditions.reduce((n, h) => n + (holds(h, t) ? 1 : 0), 0);
         if (votes >= interlock.votes) return `${tag} does not reset: its condition still holds`;
-        if (permissive >= 0 && !holds(permissive, t)) return `${tag} does not reset: ${instrumentTag(permissive)} does not permit it`;
+        if (permissive >= 0 && !holds(permissive, t))
+          return `${tag} does not reset: ${instrumentTag(permissive)} does not permit it`;
         tripped[i] = false;
         emit({ time: t, kind: 'interlock-reset', tag, text: `${tag} is reset` });
       }

@@ -62,16 +62,58 @@ export function createObserver(column: Column): Observer {
   };
   const top = column.chains[0];
   solutes.forEach((solute, k) => {
-    add(`gas-outlet.${solute.id}`, `${solute.name} in the gas outlet`, 'gas-strength', 'mol/mol', measured({ quantity: 'gas-outlet', solute: k }), k);
-    add(`gas-inlet.${solute.id}`, `${solute.name} in the gas feed`, 'gas-strength', 'mol/mol', measured({ quantity: 'gas-inlet', solute: k }), k);
-    add(`stack-flow.${solute.id}`, `${solute.name} emitted at the stack`, 'molar-flow', 'mol/s', () => {
-      let sum = 0;
-      for (const chain of top) sum += chain.work.outputs[op.gasFlow] * chain.work.outputs[op.y + k + 1];
-      return sum;
-    }, k);
-    add(`diverted-flow.${solute.id}`, `${solute.name} diverted`, 'molar-flow', 'mol/s', () => machinery.flows.gasDiverted * machinery.flows.feedY[k + 1], k);
-    add(`liquid-outlet.${solute.id}`, `${solute.name} in the liquid outlet`, 'liquid-strength', 'mol/mol', measured({ quantity: 'liquid-outlet', solute: k }), k);
-    add(`sump-strength.${solute.id}`, `${solute.name} in the sump`, 'liquid-strength', 'mol/mol', measured({ quantity: 'sump-strength', solute: k }), k);
+    add(
+      `gas-outlet.${solute.id}`,
+      `${solute.name} in the gas outlet`,
+      'gas-strength',
+      'mol/mol',
+      measured({ quantity: 'gas-outlet', solute: k }),
+      k,
+    );
+    add(
+      `gas-inlet.${solute.id}`,
+      `${solute.name} in the gas feed`,
+      'gas-strength',
+      'mol/mol',
+      measured({ quantity: 'gas-inlet', solute: k }),
+      k,
+    );
+    add(
+      `stack-flow.${solute.id}`,
+      `${solute.name} emitted at the stack`,
+      'molar-flow',
+      'mol/s',
+      () => {
+        let sum = 0;
+        for (const chain of top) sum += chain.work.outputs[op.gasFlow] * chain.work.outputs[op.y + k + 1];
+        return sum;
+      },
+      k,
+    );
+    add(
+      `diverted-flow.${solute.id}`,
+      `${solute.name} diverted`,
+      'molar-flow',
+      'mol/s',
+      () => machinery.flows.gasDiverted * machinery.flows.feedY[k + 1],
+      k,
+    );
+    add(
+      `liquid-outlet.${solute.id}`,
+      `${solute.name} in the liquid outlet`,
+      'liquid-strength',
+      'mol/mol',
+      measured({ quantity: 'liquid-outlet', solute: k }),
+      k,
+    );
+    add(
+      `sump-strength.${solute.id}`,
+      `${solute.name} in the sump`,
+      'liquid-strength',
+      'mol/mol',
+      measured({ quantity: 'sump-strength', solute: k }),
+      k,
+    );
   });
   add('gas-outlet.moisture', 'solvent vapour in the gas outlet', 'fraction', 'mol/mol', () => {
     let sum = 0;
@@ -92,20 +134,52 @@ export function createObserver(column: Column): Observer {
   add('gas-flow', 'gas into the bed', 'molar-flow', 'mol/s', measured({ quantity: 'gas-flow' }));
   add('gas-diverted', 'gas diverted', 'molar-flow', 'mol/s', () => machinery.flows.gasDiverted);
   add('bed-dp', 'pressure drop of the bed', 'pressure-difference', 'Pa', measured({ quantity: 'bed-dp' }));
-  add('liquid-flow', 'liquid to the distributor', 'volume-flow', 'm3/s', () => machinery.flows.delivery.rate + machinery.flows.emergency.rate);
+  add(
+    'liquid-flow',
+    'liquid to the distributor',
+    'volume-flow',
+    'm3/s',
+    () => machinery.flows.delivery.rate + machinery.flows.emergency.rate,
+  );
   add('holdup', 'mean hold-up of the bed', 'fraction', 'm3/m3', measured({ quantity: 'holdup' }));
   add('distributor-volume', 'liquid in the distributor', 'volume', 'm3', measured({ quantity: 'distributor-volume' }));
   add('sump-level', 'sump level', 'length', 'm', measured({ quantity: 'sump-level' }));
   add('sump-temperature', 'sump temperature', 'temperature', 'K', measured({ quantity: 'sump-temperature' }));
-  add('liquid-inlet-temperature', 'liquid inlet temperature', 'temperature', 'K', measured({ quantity: 'liquid-inlet-temperature' }));
-  add('liquid-outlet-temperature', 'liquid outlet temperature', 'temperature', 'K', measured({ quantity: 'liquid-outlet-temperature' }));
-  add('gas-inlet-temperature', 'gas inlet temperature', 'temperature', 'K', measured({ quantity: 'gas-inlet-temperature' }));
-  add('gas-outlet-temperature', 'gas outlet temperature', 'temperature', 'K', measured({ quantity: 'gas-outlet-temperature' }));
+  add(
+    'liquid-inlet-temperature',
+    'liquid inlet temperature',
+    'temperature',
+    'K',
+    measured({ quantity: 'liquid-inlet-temperature' }),
+  );
+  add(
+    'liquid-outlet-temperature',
+    'liquid outlet temperature',
+    'temperature',
+    'K',
+    measured({ quantity: 'liquid-outlet-temperature' }),
+  );
+  add(
+    'gas-inlet-temperature',
+    'gas inlet temperature',
+    'temperature',
+    'K',
+    measured({ quantity: 'gas-inlet-temperature' }),
+  );
+  add(
+    'gas-outlet-temperature',
+    'gas outlet temperature',
+    'temperature',
+    'K',
+    measured({ quantity: 'gas-outlet-temperature' }),
+  );
   add('carry-over', 'liquid carried over with the gas', 'volume-flow', 'm3/s', measured({ quantity: 'carry-over' }));
   add('pump-speed', 'pump speed', 'fraction', '1', measured({ quantity: 'pump-speed' }));
   add('make-up-flow', 'make-up', 'volume-flow', 'm3/s', measured({ quantity: 'make-up-flow' }));
   add('bleed-flow', 'bleed', 'volume-flow', 'm3/s', measured({ quantity: 'bleed-flow' }));
-  add('flood-approach', 'gas velocity over the flooding velocity, worst segment', 'fraction', '1', () => floodApproach(column));
+  add('flood-approach', 'gas velocity over the flooding velocity, worst segment', 'fraction', '1', () =>
+    floodApproach(column),
+  );
   add('loading', 'loading, worst segment', 'fraction', '1', () => {
     let worst = 0;
     for (const zones of column.chains) {
@@ -119,20 +193,46 @@ export function createObserver(column: Column): Observer {
   });
   watchedCells(column).forEach(({ place, chain, cell }) => {
     const at = cell * index.size;
-    add(`liquid-load.${place}`, `superficial liquid velocity, ${place} segment`, 'velocity', 'm/s', () => chain.work.primitives[at + index.demand] / chain.cell.crossSection);
-    add(`liquid-temperature.${place}`, `liquid temperature, ${place} segment`, 'temperature', 'K', () => chain.work.primitives[at + index.TL]);
-    add(`gas-temperature.${place}`, `gas temperature, ${place} segment`, 'temperature', 'K', () => chain.work.primitives[at + index.TG]);
+    add(
+      `liquid-load.${place}`,
+      `superficial liquid velocity, ${place} segment`,
+      'velocity',
+      'm/s',
+      () => chain.work.primitives[at + index.demand] / chain.cell.crossSection,
+    );
+    add(
+      `liquid-temperature.${place}`,
+      `liquid temperature, ${place} segment`,
+      'temperature',
+      'K',
+      () => chain.work.primitives[at + index.TL],
+    );
+    add(
+      `gas-temperature.${place}`,
+      `gas temperature, ${place} segment`,
+      'temperature',
+      'K',
+      () => chain.work.primitives[at + index.TG],
+    );
   });
   solutes.forEach((solute, k) => {
-    add(`liquid-strength-highest.${solute.id}`, `${solute.name} in the liquid, strongest segment`, 'liquid-strength', 'mol/mol', () => {
-      let most = 0;
-      for (const zones of column.chains) {
-        for (const chain of zones) {
-          for (let c = 0; c < chain.layout.cells; c++) most = Math.max(most, chain.work.primitives[c * index.size + index.x + k + 1]);
+    add(
+      `liquid-strength-highest.${solute.id}`,
+      `${solute.name} in the liquid, strongest segment`,
+      'liquid-strength',
+      'mol/mol',
+      () => {
+        let most = 0;
+        for (const zones of column.chains) {
+          for (const chain of zones) {
+            for (let c = 0; c < chain.layout.cells; c++)
+              most = Math.max(most, chain.work.primitives[c * index.size + index.x + k + 1]);
+          }
         }
-      }
-      return most;
-    }, k);
+        return most;
+      },
+      k,
+    );
   });
   const byId = new Map(quantities.map((q, i) => [q.id, i]));
   return {
@@ -148,8 +248,12 @@ export function createObserver(column: Column): Observer {
 type WatchedPlace = 'top' | 'middle' | 'bottom';
 
 /** Segments at which loads and temperatures are written down: of the first zone, counted over all beds. */
-function watchedCells(column: Column): { readonly place: WatchedPlace; readonly chain: Chain; readonly cell: number }[] {
-  const all = column.chains.flatMap(([chain]) => Array.from({ length: chain.layout.cells }, (_, cell) => ({ chain, cell })));
+function watchedCells(
+  column: Column,
+): { readonly place: WatchedPlace; readonly chain: Chain; readonly cell: number }[] {
+  const all = column.chains.flatMap(([chain]) =>
+    Array.from({ length: chain.layout.cells }, (_, cell) => ({ chain, cell })),
+  );
   return [
     { place: 'top', ...all[0] },
     { place: 'middle', ...all[all.length >> 1] },
@@ -206,9 +310,13 @@ export function segmentFloodApproach(column: Column, chainOf: Chain, cellOf: num
   }
   if (packing.billet !== undefined) {
     const muL = fluids.solventViscosity(TL);
-    const flood = billetFloodVelocity({ a: packing.area, eps }, packing.billet.CFl, { rhoL, rhoV: rhoG, muL, muV: muG }, { kind: 'velocity', value: uL });
+    const flood = billetFloodVelocity(
+      { a: packing.area, eps },
+      packing.billet.CFl,
+      { rhoL, rhoV: rhoG, muL, muV: muG },
+      { kind: 'velocity', value: uL },
+    );
     return uG / (flood * conditions.foaming);
   }
   return Number.NaN;
 }
-

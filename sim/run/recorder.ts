@@ -16,7 +16,12 @@ export interface Recorder {
   /** By row: instruments' true and shown values. */
   readonly truth: Float64Array[];
   readonly shown: Float64Array[];
-  /** @internal */ add(t: number, y: Float64Array, truthOf: (i: number) => number, shownOf: (i: number) => number): void;
+  /** @internal */ add(
+    t: number,
+    y: Float64Array,
+    truthOf: (i: number) => number,
+    shownOf: (i: number) => number,
+  ): void;
   /** @internal */ save(): RecordState;
   /** @internal */ restore(state: RecordState): void;
 }

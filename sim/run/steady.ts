@@ -18,7 +18,11 @@ const POLISH_TIME = 1e9;
 const STILL = 1e-7;
 
 export type SteadyOutcome =
-  | { readonly kind: 'steady'; readonly y: Float64Array; /** Largest rate over typical magnitude, 1/s. */ readonly residual: number }
+  | {
+      readonly kind: 'steady';
+      readonly y: Float64Array;
+      /** Largest rate over typical magnitude, 1/s. */ readonly residual: number;
+    }
   | { readonly kind: 'not-steady'; readonly y: Float64Array; readonly residual: number; readonly state: number }
   | { readonly kind: 'failed'; readonly y: Float64Array; readonly failure: StepFailure };
 

@@ -86,6 +86,12 @@ describe('run', () => {
     expect(out).toMatch(/Twice the segments\n +figure +N = 8 +2 N = 16/);
   });
 
+  test('asks an independent integrator where asked', () => {
+    const { code, out } = bedwave.run('run', 'tiny.json', '--until', '0.5 s', '--second-opinion');
+    expect(code).toBe(0);
+    expect(out).toMatch(/second opinion {2}explicit extrapolation .*: agrees within /);
+  });
+
   test('prints other units where asked', () => {
     expect(bedwave.run('run', 'tiny.json', '--units', 'us').out).toMatch(/>= \d+ scf\/min/);
   });

@@ -12,7 +12,8 @@ const valueOf = (rule: FaceRule, a: number, b: number, c: number): number => {
 
 /** Mean of a + b q^(z) over cell [j, j + 1] in units of the cell, and its value at z. */
 const profile = (a: number, b: number, q: number) => ({
-  mean: (j: number): number => (Math.abs(q - 1) < 1e-9 ? a + b * (1 + (q - 1) * (j + 0.5)) : a + (b * q ** j * (q - 1)) / Math.log(q)),
+  mean: (j: number): number =>
+    Math.abs(q - 1) < 1e-9 ? a + b * (1 + (q - 1) * (j + 0.5)) : a + (b * q ** j * (q - 1)) / Math.log(q),
   at: (z: number): number => a + b * q ** z,
 });
 
@@ -122,7 +123,8 @@ describe('slopes', () => {
         fc.pre([0, 1, 3.4, 3.5, 4].every((kink) => Math.abs(ratio - kink) > 0.15));
         const h = 1e-6;
         const around = (da: number, db: number, dc: number): number =>
-          (valueOf(rule, a + h * da, b + h * db, c + h * dc) - valueOf(rule, a - h * da, b - h * db, c - h * dc)) / (2 * h);
+          (valueOf(rule, a + h * da, b + h * db, c + h * dc) - valueOf(rule, a - h * da, b - h * db, c - h * dc)) /
+          (2 * h);
         const differences = [around(1, 0, 0), around(0, 1, 0), around(0, 0, 1)];
         rule(a, b, c, face);
         const slopes = [face.d1, face.d2, face.d3];

@@ -15,7 +15,13 @@ const sets = [
 ];
 
 /** A column at rest and clean, and what its outlets are per unit of the inlet's step. */
-function clean(bed: LinearBed): { column: Column; rest: Float64Array; gas: (y: number) => number; liquid: (c: number) => number; m: number } {
+function clean(bed: LinearBed): {
+  column: Column;
+  rest: Float64Array;
+  gas: (y: number) => number;
+  liquid: (c: number) => number;
+  m: number;
+} {
   const plant = linearBed(bed);
   const column = createColumn(plant);
   column.modes.channels.gasComposition[0] = 0;
@@ -42,109 +48,119 @@ describe('a step in the feed’s strength', () => {
         [5, 5],
       ].map(([tauG, tauL]) => ({ ...s, tauG: tauG!, tauL: tauL! })),
     ),
-  )('A $A, NOG $NOG, tauG $tauG s, tauL $tauL s follows the exact outlets, whatever the residence times', ({ set, A, NOG, tauG, tauL }) => {
-    const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
-    const sum = tauG + tauL;
-    const rows = table.filter((r) => r['set'] === set);
-    const final = gasLeft(NOG, A);
-    const points = rows
-      .flatMap((r) => [
-        { t: tauG + Number(r['Theta']) * sum, y: Number(r['y_gas']), X: Number.NaN },
-        { t: Number(r['Theta']) * sum, y: Number.NaN, X: Number(r['X_liquid']) },
-      ])
-      .sort((a, b) => a.t - b.t);
-    let next = 0;
-    let worstGas = 0;
-    let worstLiquid = 0;
-    march(
-      column,
-      rest,
-      points.map((p) => p.t),
-      (t, state) => {
-        const outlet = outletAt(column, t, state);
-        const { y, X } = points[next++]!;
-        if (Number.isNaN(y)) {
-          worstLiquid = Math.max(worstLiquid, (Math.abs(liquid(outlet.c[0]!) - X) * A) / (1 - final));
-        } else if (Math.abs(t - tauG) > 0.3 * tauG) {
-          worstGas = Math.max(worstGas, Math.abs(gas(outlet.y[0]!) - y) / final);
-        }
-      },
-      { events: [{ at: 0, act: stepGas }] },
-    );
-    // The project's bar is 1 % of the final outlet, away from the gas front; measured 0.2 % and 0.3 %.
-    expect(worstGas).toBeLessThan(0.003);
-    expect(worstLiquid).toBeLessThan(0.004);
-  });
+  )(
+    'A $A, NOG $NOG, tauG $tauG s, tauL $tauL s follows the exact outlets, whatever the residence times',
+    ({ set, A, NOG, tauG, tauL }) => {
+      const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
+      const sum = tauG + tauL;
+      const rows = table.filter((r) => r['set'] === set);
+      const final = gasLeft(NOG, A);
+      const points = rows
+        .flatMap((r) => [
+          { t: tauG + Number(r['Theta']) * sum, y: Number(r['y_gas']), X: Number.NaN },
+          { t: Number(r['Theta']) * sum, y: Number.NaN, X: Number(r['X_liquid']) },
+        ])
+        .sort((a, b) => a.t - b.t);
+      let next = 0;
+      let worstGas = 0;
+      let worstLiquid = 0;
+      march(
+        column,
+        rest,
+        points.map((p) => p.t),
+        (t, state) => {
+          const outlet = outletAt(column, t, state);
+          const { y, X } = points[next++]!;
+          if (Number.isNaN(y)) {
+            worstLiquid = Math.max(worstLiquid, (Math.abs(liquid(outlet.c[0]!) - X) * A) / (1 - final));
+          } else if (Math.abs(t - tauG) > 0.3 * tauG) {
+            worstGas = Math.max(worstGas, Math.abs(gas(outlet.y[0]!) - y) / final);
+          }
+        },
+        { events: [{ at: 0, act: stepGas }] },
+      );
+      // The project's bar is 1 % of the final outlet, away from the gas front; measured 0.2 % and 0.3 %.
+      expect(worstGas).toBeLessThan(0.003);
+      expect(worstLiquid).toBeLessThan(0.004);
+    },
+  );
 
-  it.each(sets)('A $A, NOG $NOG: the front itself, seen behind a 1 s lag, is within 1 % of the final outlet', ({ set, A, NOG }) => {
-    const tauG = 1.2;
-    const tauL = 40;
-    const sum = tauG + tauL;
-    const { column, rest, gas } = clean({ NOG, A, tauG, tauL });
-    const rows = table.filter((r) => r['set'] === set);
-    const theta = rows.map((r) => Number(r['Theta']));
-    const exact = rows.map((r) => Number(r['y_gas']));
-    // Between Theta 0 and 0.05 the slope falls from exp(-N) N^2/A to the chord's: a parabola through both ends.
-    const slope = (Math.exp(-NOG) * NOG * NOG) / A;
-    const early = (x: number): number => {
-      const bend = (exact[1]! - exact[0]! - slope * theta[1]!) / theta[1]! ** 2;
-      return exact[0]! + slope * x + bend * x * x;
-    };
-    const dt = 0.005;
-    const times = evenly(3.2, dt); // Theta up to 0.05
-    let seen = 0;
-    let expected = 0;
-    let worst = 0;
-    march(
-      column,
-      rest,
-      times,
-      (t, state) => {
-        const here = gas(outletAt(column, t, state).y[0]!);
-        const x = (t - tauG) / sum;
-        seen += dt * (here - seen);
-        expected += dt * ((x < 0 ? 0 : early(x)) - expected);
-        worst = Math.max(worst, Math.abs(seen - expected));
-      },
-      { events: [{ at: 0, act: stepGas }] },
-    );
-    expect(worst / gasLeft(NOG, A)).toBeLessThan(0.01); // the project's bar
-  });
+  it.each(sets)(
+    'A $A, NOG $NOG: the front itself, seen behind a 1 s lag, is within 1 % of the final outlet',
+    ({ set, A, NOG }) => {
+      const tauG = 1.2;
+      const tauL = 40;
+      const sum = tauG + tauL;
+      const { column, rest, gas } = clean({ NOG, A, tauG, tauL });
+      const rows = table.filter((r) => r['set'] === set);
+      const theta = rows.map((r) => Number(r['Theta']));
+      const exact = rows.map((r) => Number(r['y_gas']));
+      // Between Theta 0 and 0.05 the slope falls from exp(-N) N^2/A to the chord's: a parabola through both ends.
+      const slope = (Math.exp(-NOG) * NOG * NOG) / A;
+      const early = (x: number): number => {
+        const bend = (exact[1]! - exact[0]! - slope * theta[1]!) / theta[1]! ** 2;
+        return exact[0]! + slope * x + bend * x * x;
+      };
+      const dt = 0.005;
+      const times = evenly(3.2, dt); // Theta up to 0.05
+      let seen = 0;
+      let expected = 0;
+      let worst = 0;
+      march(
+        column,
+        rest,
+        times,
+        (t, state) => {
+          const here = gas(outletAt(column, t, state).y[0]!);
+          const x = (t - tauG) / sum;
+          seen += dt * (here - seen);
+          expected += dt * ((x < 0 ? 0 : early(x)) - expected);
+          worst = Math.max(worst, Math.abs(seen - expected));
+        },
+        { events: [{ at: 0, act: stepGas }] },
+      );
+      expect(worst / gasLeft(NOG, A)).toBeLessThan(0.01); // the project's bar
+    },
+  );
 
   // First moments, integral of (final - outlet) over Theta: slope of the exact transfer function at s = 0, six digits.
   it.each([
     { A: 0.7, NOG: 3, gasMoment: 0.162442, liquidMoment: 0.310098 },
     { A: 1.3, NOG: 5, gasMoment: 0.054489, liquidMoment: 0.240318 },
     { A: 2.5, NOG: 8, gasMoment: 0.001972, liquidMoment: 0.078829 },
-  ])('A $A, NOG $NOG: area between outlet and its final value, and the slopes at the start', ({ A, NOG, gasMoment, liquidMoment }) => {
-    const tauG = 0.5;
-    const tauL = 50;
-    const sum = tauG + tauL;
-    const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
-    const y: number[] = [];
-    const X: number[] = [];
-    const dt = 0.25;
-    march(
-      column,
-      rest,
-      evenly(8 * sum, dt),
-      (t, state) => {
-        const outlet = outletAt(column, t, state);
-        y.push(gas(outlet.y[0]!));
-        X.push(liquid(outlet.c[0]!));
-      },
-      { events: [{ at: 0, act: stepGas }] },
-    );
-    const final = gasLeft(NOG, A);
-    const area = (series: number[], end: number): number => series.reduce((s, v, i) => s + (i === 0 ? 0.5 : 1) * (end - v) * dt, 0);
-    // The gas's moment counts from Theta = 0, t = tauG. Trapezoids over the gas front: 0.25 s of 50 s.
-    expect(Math.abs((area(y, final) - final * tauG) / sum - gasMoment)).toBeLessThan(0.01 * gasMoment);
-    expect(Math.abs(area(X, (1 - final) / A) / sum - liquidMoment)).toBeLessThan(0.003 * liquidMoment);
-    // Liquid: dX/dTheta = N/A at once; over the first 1 s, while the gas front passes, the curve has turned by 3 %.
-    const slope = (X[8]! - X[4]!) / ((4 * dt) / sum);
-    expect(Math.abs(slope / (NOG / A) - 1)).toBeLessThan(0.12);
-    expect(slope).toBeLessThan(NOG / A);
-  });
+  ])(
+    'A $A, NOG $NOG: area between outlet and its final value, and the slopes at the start',
+    ({ A, NOG, gasMoment, liquidMoment }) => {
+      const tauG = 0.5;
+      const tauL = 50;
+      const sum = tauG + tauL;
+      const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
+      const y: number[] = [];
+      const X: number[] = [];
+      const dt = 0.25;
+      march(
+        column,
+        rest,
+        evenly(8 * sum, dt),
+        (t, state) => {
+          const outlet = outletAt(column, t, state);
+          y.push(gas(outlet.y[0]!));
+          X.push(liquid(outlet.c[0]!));
+        },
+        { events: [{ at: 0, act: stepGas }] },
+      );
+      const final = gasLeft(NOG, A);
+      const area = (series: number[], end: number): number =>
+        series.reduce((s, v, i) => s + (i === 0 ? 0.5 : 1) * (end - v) * dt, 0);
+      // The gas's moment counts from Theta = 0, t = tauG. Trapezoids over the gas front: 0.25 s of 50 s.
+      expect(Math.abs((area(y, final) - final * tauG) / sum - gasMoment)).toBeLessThan(0.01 * gasMoment);
+      expect(Math.abs(area(X, (1 - final) / A) / sum - liquidMoment)).toBeLessThan(0.003 * liquidMoment);
+      // Liquid: dX/dTheta = N/A at once; over the first 1 s, while the gas front passes, the curve has turned by 3 %.
+      const slope = (X[8]! - X[4]!) / ((4 * dt) / sum);
+      expect(Math.abs(slope / (NOG / A) - 1)).toBeLessThan(0.12);
+      expect(slope).toBeLessThan(NOG / A);
+    },
+  );
 });
 
 describe('a step in the liquid’s strength', () => {
@@ -184,7 +200,7 @@ describe('a step in the liquid’s strength', () => {
     );
     // The project's bar is 1 % of the final value; the front now runs down with the liquid, and its jump is exp(-N/A).
     expect(worstGas).toBeLessThan(0.005);
-    expect(worstLiquid / (1 - A * (1 - gasLeft(NOG / A, 1 / A)) / A)).toBeLessThan(0.01);
+    expect(worstLiquid / (1 - (A * (1 - gasLeft(NOG / A, 1 / A))) / A)).toBeLessThan(0.01);
   });
 
   it('the gas’s answer to the gas is the liquid’s answer to the liquid with the phases’ roles changed', () => {

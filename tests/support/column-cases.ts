@@ -194,7 +194,11 @@ export const absorber: Case = {
   provenance: [],
 };
 
-function instrument(tag: string, measured: Case['instruments'][number]['measured'], lag: number): Case['instruments'][number] {
+function instrument(
+  tag: string,
+  measured: Case['instruments'][number]['measured'],
+  lag: number,
+): Case['instruments'][number] {
   return {
     tag,
     measured,

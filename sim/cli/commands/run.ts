@@ -6,12 +6,13 @@ import {
   measuredSentence,
   readSaved,
   resultOf,
+  secondOpinionOf,
   writeCsv,
   writeResult,
   writeSaved,
   type Case,
-  type ConvergenceBlock,
   type ResultDocument,
+  type ResultExtras,
   type Run,
   type SavedFile,
   type Scenario,
@@ -39,7 +40,7 @@ export function runCommand(path: string, options: Options): number {
   checkSaving(scenario, options, saved);
   const run = createRun(plant, scenario, saved?.run);
   go(run, loaded, options, [path, ...(options.resume === undefined ? [] : [options.resume])]);
-  const result = resultOf(run, { caseText: loaded.text, ...estimate(run, options) });
+  const result = resultOf(run, { caseText: loaded.text, ...studies(run, options) });
   output(result, run, options, [path]);
   return exitCode(result, options.hold ?? []);
 }
@@ -128,13 +129,20 @@ function go(run: Run, { text }: LoadedCase, { save, profiles }: Options, inputs:
   if (save !== undefined) say(`saved the run at ${save.time} s to ${save.file}`);
 }
 
-/** The same run on twice the segments, where asked and where there is a run to compare. */
-function estimate(run: Run, options: Options): { convergence?: ConvergenceBlock } {
-  if (options.estimate !== true || run.outcome.kind === 'failed') return {};
-  const progress = progressLine(`${run.scenario.id}, twice the segments,`, run.scenario.duration);
-  const convergence = convergenceOf(run, (t) => progress.update(t));
-  progress.finish();
-  return { convergence };
+/** What is asked for beside the run: the same by another integrator, and on twice the segments. */
+function studies(run: Run, options: Options): Pick<ResultExtras, 'secondOpinion' | 'convergence'> {
+  const watched = <T>(what: string, study: (run: Run, onStep: (t: number) => void) => T): T => {
+    const progress = progressLine(`${run.scenario.id}, ${what},`, run.time);
+    const found = study(run, (t) => progress.update(t));
+    progress.finish();
+    return found;
+  };
+  return {
+    ...(options.secondOpinion === true ? { secondOpinion: watched('second opinion', secondOpinionOf) } : {}),
+    ...(options.estimate === true && run.outcome.kind !== 'failed'
+      ? { convergence: watched('twice the segments', convergenceOf) }
+      : {}),
+  };
 }
 
 /** Document and table to their files, or one of them, or else the report, to standard output. */
