@@ -140,7 +140,7 @@ export const RUN = {
   rtol: judged(1e-5, 'own measurements: 1e-4 was visibly off after a trip and restart'),
   method: judged('default', 'choice of the program'),
   axialScheme: judged('exponential' as const, 'exact for a linear counter-current bed'),
-  recordEvery: judged(1),
+  recordEvery: judged(10),
   maxSteps: judged(200_000),
   seed: judged(1),
   noise: judged(false),

@@ -70,10 +70,8 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
   const spread = Math.max(0.5 * hs, 1e-9);
   const closing = CLOSING_BAND * eps;
 
-  /** Velocity, gradient and loading at a hold-up within (hs, full). */
-  let u = 0;
-  let gradient = 0;
-  let loading = 0;
+  /** Velocity, gradient and loading at a hold-up within (hs, full); fields, since closed-over numbers would be boxed. */
+  const branch = { u: 0.5, gradient: 0.5, loading: 0.5 };
   const rising = (h: number, dry: number, c: number): void => {
     let hd = h;
     let slope = 1; // of hd
@@ -90,9 +88,9 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
     const lift = loadingFactor * P * P;
     const kappa = exponent / (solid + h) + 4.65 / (eps - h);
     const r = hd > 0 ? hd / (p.holdupFactor * (1 + lift)) : 0;
-    u = scale * r * Math.sqrt(r);
-    gradient = P;
-    loading = hd > 0 ? (2 * lift * kappa * hd) / ((1 + lift) * slope) : 0;
+    branch.u = scale * r * Math.sqrt(r);
+    branch.gradient = P;
+    branch.loading = hd > 0 ? (2 * lift * kappa * hd) / ((1 + lift) * slope) : 0;
   };
   /** Hold-up at the flood point, where the loading is 1; bisection in (hs, full). */
   const floodHoldup = (dry: number, c: number): number => {
@@ -101,14 +99,14 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
     for (let i = 0; i < 48; i++) {
       const middle = 0.5 * (low + high);
       rising(middle, dry, c);
-      if (loading < 1) low = middle;
+      if (branch.loading < 1) low = middle;
       else high = middle;
     }
     return 0.5 * (low + high);
   };
   const capacity = (dry: number, c: number): number => {
     rising(floodHoldup(dry, c), dry, c);
-    return u;
+    return branch.u;
   };
   const froth = 1 / (p.deflooding * p.deflooding);
   return {
@@ -117,20 +115,16 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
     evaluate(holdup, dry, c, out) {
       const h = holdup < fullHoldup ? holdup : fullHoldup;
       rising(h > 0 ? h : 0, dry, c);
-      const here = u;
+      const { u, gradient, loading } = branch;
       out.gradient = gradient;
       out.loading = loading;
-      const load = loading;
-      if (load < 1) {
-        out.demand = here;
+      if (loading < 1) {
+        out.demand = u;
         out.supply = UNLIMITED_VELOCITY;
       } else {
-        const gradientHere = gradient;
         const floor = capacity(dry * froth, c);
-        out.supply = here > floor ? here : floor;
+        out.supply = u > floor ? u : floor;
         out.demand = capacity(dry, c);
-        out.gradient = gradientHere;
-        out.loading = load;
       }
       const room = (fullHoldup - holdup) / closing;
       if (room < 1) out.supply = room > 0 ? Math.min(out.supply, 10 * out.demand) * room : 0;

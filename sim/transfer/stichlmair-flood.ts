@@ -1,6 +1,7 @@
 // Flooding after Stichlmair, Bravo and Fair: the gas velocity at which the pressure drop has an
 // infinite slope, at a given liquid velocity.
 
+import { bracketedRoot } from '../numerics/bracketed-root.ts';
 import { STANDARD_GRAVITY } from '../properties/constants.ts';
 import { stichlmairPreloadHoldup } from './stichlmair-holdup.ts';
 import {
@@ -11,7 +12,7 @@ import {
 } from './stichlmair-pressure-drop.ts';
 import type { StichlmairPacking } from './stichlmair-pressure-drop.ts';
 
-const MAX_STEPS = 200;
+/** Widths at which the roots are taken as found, of the pressure ratio and of the velocity, relative to the upper end. */
 const TOLERANCE = 1e-13;
 
 /**
@@ -23,21 +24,20 @@ const TOLERANCE = 1e-13;
  * @param h0 - Preload hold-up, m3/m3; below eps.
  * @param c - Exponent of the friction factor at the flood point.
  * @returns P; dimensionless, usually 0.1-0.3. 0 when h0 alone fills the voids.
- * @remarks The left side falls with P and the right side rises: one root, found by bisection.
+ * @remarks The left side falls with P and the right side rises: one root.
  * Source: [Stichlmair1989] (= slope of one in the implicit pressure drop).
  */
 function stichlmairFloodPressure(eps: number, h0: number, c: number): number {
   if (h0 >= eps) return 0;
-  let low = 0;
-  let high = Math.sqrt((eps / h0 - 1) / 20);
-  for (let k = 0; k < MAX_STEPS && high - low > TOLERANCE * high; k++) {
-    const P = 0.5 * (low + high);
+  const high = Math.sqrt((eps / h0 - 1) / 20);
+  const surplus = (P: number): number => {
     const h = h0 * (1 + 20 * P * P);
-    const right = (40 * (2 + c) * h0) / (3 * (1 - eps + h)) + (186 * h0) / (eps - h);
-    if (right * P * P < 1) low = P;
-    else high = P;
-  }
-  return 0.5 * (low + high);
+    return ((40 * (2 + c) * h0) / (3 * (1 - eps + h)) + (186 * h0) / (eps - h)) * P * P - 1;
+  };
+  // At the upper end the hold-up fills the voids and the surplus is infinite; a hair below it is merely large.
+  const last = high * (1 - 1e-6);
+  const { before, after } = bracketedRoot(surplus, 0, last, -1, surplus(last), TOLERANCE * high);
+  return 0.5 * (before + after);
 }
 
 /**
@@ -64,18 +64,19 @@ export function stichlmairFloodVelocity(
   const h0 = stichlmairPreloadHoldup(packing, uL);
   if (h0 <= 0) return Infinity;
   if (h0 >= packing.eps) return 0;
+  const over = (u: number): number => excess(packing, h0, u, rhoL, rhoG, muG);
   let low = 0;
   let high = 1;
-  while (excess(packing, h0, high, rhoL, rhoG, muG) < 0) {
+  let below = -1; // with no gas there is only the allowance
+  let above = over(high);
+  while (above < 0) {
     low = high;
+    below = above;
     high *= 2;
+    above = over(high);
   }
-  for (let k = 0; k < MAX_STEPS && high - low > TOLERANCE * high; k++) {
-    const u = 0.5 * (low + high);
-    if (excess(packing, h0, u, rhoL, rhoG, muG) < 0) low = u;
-    else high = u;
-  }
-  return 0.5 * (low + high);
+  const { before, after } = bracketedRoot(over, low, high, below, above, TOLERANCE * high);
+  return 0.5 * (before + after);
 }
 
 /** Pressure gradient at the flood point of this liquid rate, Pa/m, given the flood velocity. */

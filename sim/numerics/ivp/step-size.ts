@@ -4,9 +4,9 @@ import { weightedRms } from './error-norm.ts';
 import type { IvpProblem } from './problem.ts';
 
 /** Share of the step that the error estimate would allow [HairerWanner1996, IV.8, default of the codes there]. */
-const SAFETY = 0.9;
+const SAFETY = 0.8;
 /** A step grows at most by this factor; as in the Rosenbrock code of [HairerWanner1996]. */
-const MAX_GROWTH = 6;
+const MAX_GROWTH = 3;
 /** A step shrinks at most to this share; as in the Rosenbrock code of [HairerWanner1996]. */
 const MIN_SHRINK = 0.2;
 /** Smallest error that the predictive rule divides by [HairerWanner1996, IV.8]. */
