@@ -26,11 +26,11 @@ export interface ColumnJacobianParts {
   readonly outputs: OutputPorts;
   readonly molarVolume: (T: number) => number;
   readonly scales: Float64Array;
-  readonly evaluate: (t: number, y: Float64Array, dydt: Float64Array) => void;
 }
 
 export interface ColumnJacobian {
   readonly pattern: SparsePattern;
+  /** At a state that the column has just been evaluated at. */
   readonly fill: (t: number, y: Float64Array, values: Float64Array) => void;
 }
 
@@ -157,7 +157,6 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
   /** Slopes of the fluxes through one face: [flux][cell 0..2][columns], and to the chain's inputs. */
   const cellSlopes = new Float64Array(fluxes * 3 * columns);
   const inputSlopes = new Float64Array(fluxes * ip.size);
-  const scratch = new Float64Array(layout.size);
   const base = new Float64Array(layout.size);
   /** d(input)/d(core column), [chain][input * coreSize + column]. */
   const inputCore = chains.map(() => new Float64Array(ip.size * coreSize));
@@ -956,7 +955,6 @@ export function createColumnJacobian(parts: ColumnJacobianParts): ColumnJacobian
     pattern,
     fill(t, y, values) {
       values.fill(0);
-      parts.evaluate(t, y, scratch);
       differenceCore(t, y, values);
       for (let i = 0; i < chains.length; i++) {
         differenceCells(i, y);

@@ -36,6 +36,8 @@ export interface Column extends IvpProblem {
   readonly inputs: InputPorts;
   readonly outputs: OutputPorts;
   /** Typical magnitude of each state, for tolerances and differences. */ readonly scales: Float64Array;
+  /** The Jacobian where the column has just been evaluated; saves one evaluation. */
+  jacobianHere(t: number, y: Float64Array, values: Float64Array): void;
   /** Makes the linear solver that fits the structure. */
   createSolver(): ShiftedSolver;
   /** Replaces what moves the channels; `varies` says whether they depend on time in the present piece. */
@@ -196,7 +198,6 @@ export function createColumn(plant: Case, options: ColumnOptions = {}): Column {
     outputs,
     molarVolume: (T) => readHermiteColumn(volumeTable, 0, T),
     scales,
-    evaluate: rhs,
   });
   return {
     plant,
@@ -214,7 +215,11 @@ export function createColumn(plant: Case, options: ColumnOptions = {}): Column {
     auxiliary: layout.auxiliary,
     pattern: jacobian.pattern,
     rhs,
-    jacobian: jacobian.fill,
+    jacobian(t, y, values) {
+      rhs(t, y, base);
+      jacobian.fill(t, y, values);
+    },
+    jacobianHere: jacobian.fill,
     timeDerivative(t, y, out) {
       if (!varies) return false;
       const h = 1e-6 * Math.max(1, Math.abs(t));

@@ -5,6 +5,7 @@ import { ESDIRK3, ESDIRK4, TR_BDF2 } from '../numerics/ivp/esdirk-tableau.ts';
 import { createExtrapolationStepper } from '../numerics/ivp/extrapolation.ts';
 import { createRosenbrockStepper } from '../numerics/ivp/rosenbrock.ts';
 import { RODAS4, RODAS5P, ROS34PW2 } from '../numerics/ivp/rosenbrock-tableau.ts';
+import type { IvpProblem } from '../numerics/ivp/problem.ts';
 import type { StepperOptions } from '../numerics/ivp/options.ts';
 import type { Stepper } from '../numerics/ivp/stepper.ts';
 
@@ -39,8 +40,12 @@ export function columnTolerances(column: Column, rtol: number): { rtol: Float64A
   return { rtol: relative, atol: absolute };
 }
 
-/** Makes the stepper. */
-export function createColumnStepper(column: Column, settings: IntegrationSettings): Stepper {
+/** Makes the stepper; `problem` is the column, or a wrapping of it. */
+export function createColumnStepper(
+  column: Column,
+  settings: IntegrationSettings,
+  problem: IvpProblem = column,
+): Stepper {
   const options: StepperOptions = {
     ...columnTolerances(column, settings.rtol),
     maxStep: settings.maxStep,
@@ -49,18 +54,18 @@ export function createColumnStepper(column: Column, settings: IntegrationSetting
   };
   switch (settings.method) {
     case 'rodas4':
-      return createRosenbrockStepper(column, RODAS4, options);
+      return createRosenbrockStepper(problem, RODAS4, options);
     case 'rodas5p':
-      return createRosenbrockStepper(column, RODAS5P, options);
+      return createRosenbrockStepper(problem, RODAS5P, options);
     case 'ros34pw2':
-      return createRosenbrockStepper(column, ROS34PW2, options);
+      return createRosenbrockStepper(problem, ROS34PW2, options);
     case 'esdirk3':
-      return createEsdirkStepper(column, ESDIRK3, options);
+      return createEsdirkStepper(problem, ESDIRK3, options);
     case 'esdirk4':
-      return createEsdirkStepper(column, ESDIRK4, options);
+      return createEsdirkStepper(problem, ESDIRK4, options);
     case 'tr-bdf2':
-      return createEsdirkStepper(column, TR_BDF2, options);
+      return createEsdirkStepper(problem, TR_BDF2, options);
     case 'extrapolation':
-      return createExtrapolationStepper(column, options);
+      return createExtrapolationStepper(problem, options);
   }
 }

@@ -12,6 +12,7 @@ import type { StepFailure, Stepper, StepperState, StepperStats } from '../numeri
 import { carryOut, type ActionTargets } from './actions.ts';
 import type { RunEvent } from './events.ts';
 import { fitDuct, initialState } from './initial-state.ts';
+import { createEvaluation, type Evaluation } from './evaluation.ts';
 import { createColumnStepper, isMethod, METHODS } from './integrators.ts';
 import { createLogic, type Logic, type LogicState } from './logic.ts';
 import { createObserver } from './observation.ts';
@@ -112,14 +113,11 @@ export function createRun(plant: Case, scenario: Scenario, saved?: SavedRun): Ru
   const logic = createLogic(plant, scenario);
   const recorder = createRecorder(createObserver(column), plant.instruments.length);
   const method = isMethod(plant.run.method) ? plant.run.method : METHODS[0];
-  const makeStepper = (): Stepper =>
-    createColumnStepper(column, {
-      method,
-      rtol: plant.run.rtol,
-      maxStep: signals.controlDeadTime,
-      maxSteps: plant.run.maxSteps,
-    });
-  const run = new RunCore(plant, scenario, column, signals, programs, logic, recorder, makeStepper());
+  const evaluation = createEvaluation(column);
+  const { rtol, maxSteps } = plant.run;
+  const settings = { method, rtol, maxStep: signals.controlDeadTime, maxSteps };
+  const stepper = createColumnStepper(column, settings, evaluation);
+  const run = new RunCore(plant, scenario, column, signals, programs, logic, recorder, evaluation, stepper);
   if (saved === undefined) {
     fitDuct(column); // a fan that is too small is said by the plant check; the run shows what it gives
     const start = initialState(column, scenario.initial);
@@ -153,10 +151,10 @@ class RunCore implements Run {
   readonly #signals: Signals;
   readonly #programs: Programs;
   readonly #logic: Logic;
+  readonly #evaluation: Evaluation;
   readonly #stepper: Stepper;
   readonly #targets: ActionTargets;
   /** State between, for looking into a step. */ readonly #between: Float64Array;
-  readonly #rates: Float64Array;
   #pieceStart = 0;
   #nextRecord = 0;
 
@@ -168,6 +166,7 @@ class RunCore implements Run {
     programs: Programs,
     logic: Logic,
     recorder: Recorder,
+    evaluation: Evaluation,
     stepper: Stepper,
   ) {
     this.plant = plant;
@@ -178,9 +177,9 @@ class RunCore implements Run {
     this.#signals = signals;
     this.#programs = programs;
     this.#logic = logic;
+    this.#evaluation = evaluation;
     this.#stepper = stepper;
     this.#between = new Float64Array(column.size);
-    this.#rates = new Float64Array(column.size);
     this.#targets = {
       plant,
       modes: column.modes,
@@ -428,6 +427,7 @@ class RunCore implements Run {
   }
 
   #beginPiece(t: number): void {
+    this.#evaluation.forget();
     this.#pieceStart = t;
     this.#programs.apply(t);
     this.column.setChannels((at) => {
@@ -450,6 +450,7 @@ class RunCore implements Run {
       mode.nextSample += interval;
       if (mode.fault === 'frozen') return;
       mode.held = this.#signals.conditioned(i, t, this.#rawAt(i, t));
+      this.#evaluation.forget(); // a controller may read it
       sampled.push(i);
     });
     if (sampled.length === 0) return;
@@ -469,7 +470,7 @@ class RunCore implements Run {
   }
 
   #evaluate(t: number, y: Float64Array): void {
-    this.column.rhs(t, y, this.#rates);
+    this.#evaluation.settle(t, y);
   }
 
   /** State at a time of the last step, evaluated. */
