@@ -99,10 +99,10 @@ const EVENT_TOLERANCE = 1e-9;
 const PARTS_LAGGED = 4;
 const PARTS_DIRECT = 2;
 /**
- * Parts of a step that are written down: straight lines between them are within 1e-4 of a curve that the integrator
- * follows to 1e-5 with a method of fourth order ((h/5)^2/8 for h^4/24 = 1e-5).
+ * Parts of a step that are written down: straight lines between them are within 2e-4 of a curve that the integrator
+ * follows to 1e-5 with a method of fourth order ((h/4)^2/8 for h^4/24 = 1e-5).
  */
-const PARTS_RECORDED = 5;
+const PARTS_RECORDED = 4;
 
 /** Starts a run at the scenario's initial state, or resumes a saved one. */
 export function createRun(plant: Case, scenario: Scenario, saved?: SavedRun): Run {

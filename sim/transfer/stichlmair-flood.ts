@@ -12,8 +12,10 @@ import {
 } from './stichlmair-pressure-drop.ts';
 import type { StichlmairPacking } from './stichlmair-pressure-drop.ts';
 
-/** Widths at which the roots are taken as found, of the pressure ratio and of the velocity, relative to the upper end. */
+/** Relative widths at which the roots are taken as found. */
 const TOLERANCE = 1e-13;
+/** Share by which a bracket stays clear of its bounds. */
+const MARGIN = 1e-9;
 
 /**
  * Relative pressure drop at the flood point.
@@ -29,14 +31,15 @@ const TOLERANCE = 1e-13;
  */
 function stichlmairFloodPressure(eps: number, h0: number, c: number): number {
   if (h0 >= eps) return 0;
-  const high = Math.sqrt((eps / h0 - 1) / 20);
-  const surplus = (P: number): number => {
-    const h = h0 * (1 + 20 * P * P);
-    return ((40 * (2 + c) * h0) / (3 * (1 - eps + h)) + (186 * h0) / (eps - h)) * P * P - 1;
-  };
-  // At the upper end the hold-up fills the voids and the surplus is infinite; a hair below it is merely large.
-  const last = high * (1 - 1e-6);
-  const { before, after } = bracketedRoot(surplus, 0, last, -1, surplus(last), TOLERANCE * high);
+  const friction = (40 * (2 + c) * h0) / 3;
+  const right = (h: number): number => friction / (1 - eps + h) + (186 * h0) / (eps - h);
+  const holdup = (P: number): number => h0 * (1 + 20 * P * P);
+  // The first term falls with h and the second rises: their extremes bound the right side, and so P.
+  const fills = Math.sqrt((eps / h0 - 1) / 20);
+  const high = Math.min(1 / Math.sqrt(friction + (186 * h0) / (eps - h0)), (1 - MARGIN) * fills);
+  const low = (1 - MARGIN) / Math.sqrt(friction / (1 - eps + h0) + (186 * h0) / (eps - holdup(high)));
+  const surplus = (P: number): number => right(holdup(P)) * P * P - 1;
+  const { before, after } = bracketedRoot(surplus, low, high, surplus(low), surplus(high), TOLERANCE * high);
   return 0.5 * (before + after);
 }
 
@@ -64,19 +67,13 @@ export function stichlmairFloodVelocity(
   const h0 = stichlmairPreloadHoldup(packing, uL);
   if (h0 <= 0) return Infinity;
   if (h0 >= packing.eps) return 0;
-  const over = (u: number): number => excess(packing, h0, u, rhoL, rhoG, muG);
-  let low = 0;
+  const over = (logU: number): number => excess(packing, h0, Math.exp(logU), rhoL, rhoG, muG);
+  let low = -1;
   let high = 1;
-  let below = -1; // with no gas there is only the allowance
-  let above = over(high);
-  while (above < 0) {
-    low = high;
-    below = above;
-    high *= 2;
-    above = over(high);
-  }
-  const { before, after } = bracketedRoot(over, low, high, below, above, TOLERANCE * high);
-  return 0.5 * (before + after);
+  while (over(low) >= 0) low -= 2;
+  while (over(high) < 0) high += 2;
+  const { before, after } = bracketedRoot(over, low, high, over(low), over(high), TOLERANCE);
+  return Math.exp(0.5 * (before + after));
 }
 
 /** Pressure gradient at the flood point of this liquid rate, Pa/m, given the flood velocity. */
@@ -93,11 +90,11 @@ export function stichlmairFloodPressureDrop(
   return stichlmairFloodPressure(packing.eps, h0, c) * rhoL * STANDARD_GRAVITY;
 }
 
-/** Friction at velocity u less what the flood condition allows, Pa/m; increases with u. */
+/** Logarithm of the friction at velocity u over what the flood condition allows; increases with u. */
 function excess(packing: StichlmairPacking, h0: number, u: number, rhoL: number, rhoG: number, muG: number): number {
   const c = stichlmairExponent(packing, stichlmairReynolds(packing, u, rhoG, muG));
   const P = stichlmairFloodPressure(packing.eps, h0, c);
   const h = h0 * (1 + 20 * P * P);
   const dry = stichlmairDryPressureDrop(packing, u, rhoG, muG);
-  return dry * stichlmairWetFactor(packing.eps, c, h) - P * rhoL * STANDARD_GRAVITY;
+  return Math.log((dry * stichlmairWetFactor(packing.eps, c, h)) / (P * rhoL * STANDARD_GRAVITY));
 }
