@@ -68,11 +68,21 @@ export function stichlmairFloodVelocity(
   if (h0 <= 0) return Infinity;
   if (h0 >= packing.eps) return 0;
   const over = (logU: number): number => excess(packing, h0, Math.exp(logU), rhoL, rhoG, muG);
-  let low = -1;
-  let high = 1;
-  while (over(low) >= 0) low -= 2;
-  while (over(high) < 0) high += 2;
-  const { before, after } = bracketedRoot(over, low, high, over(low), over(high), TOLERANCE);
+  // From 1 m/s outwards to a change of sign.
+  const first = over(0);
+  if (first === 0) return 1;
+  const outwards = first < 0 ? 1 : -1;
+  let near = 0;
+  let atNear = first;
+  let far = outwards;
+  let atFar = over(far);
+  while (atFar < 0 === first < 0) {
+    near = far;
+    atNear = atFar;
+    far += outwards;
+    atFar = over(far);
+  }
+  const { before, after } = bracketedRoot(over, near, far, atNear, atFar, TOLERANCE);
   return Math.exp(0.5 * (before + after));
 }
 
