@@ -13,6 +13,7 @@ import {
   LIQUID,
   LIQUID_SOLUTE,
   SOLUTE_COLUMNS,
+  SOLUTE_PRESSURE,
   type Fluids,
 } from './fluids.ts';
 import { createFilmLaw, type FilmState } from './film-law.ts';
@@ -21,7 +22,7 @@ import type { HydraulicState } from './hydraulic-law.ts';
 import { NO_LIMIT, type Primitives } from './primitives.ts';
 
 /** Conditions of a bed that change during a run; owned by the column, read by its cells. */
-export interface BedConditions {
+interface BedConditions {
   /** Share of the voids lost to deposits, 0..1; acts on friction and drainage, not on the inventories. */
   fouling: number;
   /** Foaming: capacity factor, 1 clean; divides the gas load that hold-up feels. */
@@ -234,7 +235,7 @@ export function createCell(plant: Case, fluids: Fluids, bed: Bed, areaShare: num
       }
       for (let k = 1; k < components; k++) {
         const x = out[oo + index.x + k];
-        const scale = liquid[LIQUID_SOLUTE + SOLUTE_COLUMNS * (k - 1)];
+        const scale = liquid[LIQUID_SOLUTE + SOLUTE_COLUMNS * (k - 1) + SOLUTE_PRESSURE];
         const e = equilibrium[k - 1];
         if (e.kind === 'linear') {
           slope[k] = scale;

@@ -13,7 +13,7 @@ import { inletFace, interiorFace, outletFace, type FaceValue } from './face-valu
 import { DATUM_TEMPERATURE, type Fluids } from './fluids.ts';
 import type { ChainLayout } from './layout.ts';
 import type { InputPorts, OutputPorts } from './ports.ts';
-import { NO_LIMIT, type Primitives } from './primitives.ts';
+import type { Primitives } from './primitives.ts';
 
 /** Everything a chain is made of. */
 export interface ChainParts {
@@ -31,7 +31,7 @@ export interface ChainParts {
 }
 
 /** Arrays of one chain, filled by the sweeps and read by the Jacobian. */
-export interface ChainWork {
+interface ChainWork {
   /** Primitives, cell by cell. */ readonly primitives: Float64Array;
   /** Gas flow into each cell from below in the first sweep, and out of the top, mol/s. */
   readonly flow: Float64Array;
@@ -367,9 +367,4 @@ export function createChain(parts: ChainParts): Chain {
   };
 
   return { ...parts, work, pressure, evaluateCells, balance };
-}
-
-/** Whether a supply limits anything. */
-export function limits(supply: number): boolean {
-  return supply < NO_LIMIT;
 }

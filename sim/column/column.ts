@@ -23,7 +23,7 @@ import { stateScales } from './scales.ts';
 const VOLUME_TABLE = { lower: 233.15, upper: 433.15, intervals: 160 };
 
 /** Sets the channels (and nothing else) to their values at a time. */
-export type ChannelSetter = (t: number) => void;
+type ChannelSetter = (t: number) => void;
 
 export interface Column extends IvpProblem {
   readonly plant: Case;

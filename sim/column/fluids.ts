@@ -3,7 +3,7 @@
  * The tables group properties with the packing's constants so that a cell pays one look-up instead of some twenty
  * powers; `tests/column/fluids.test.ts` holds their error against the functions they were made of.
  */
-import type { Bed, Case, Equilibrium } from '../case/case.ts';
+import type { Bed, Case } from '../case/case.ts';
 import { createHermiteTable, type HermiteTable } from '../numerics/hermite-table.ts';
 import { fullerDiffusivity } from '../properties/gas-diffusivity.ts';
 import { GAS_CONSTANT, STANDARD_GRAVITY } from '../properties/constants.ts';
@@ -147,11 +147,6 @@ export function createFluids(plant: Case): Fluids {
     gasDiffusivity,
     gasConductivity,
   };
-}
-
-/** Which equilibria are linear in the mole fraction. */
-export function isLinear(equilibrium: Equilibrium): boolean {
-  return equilibrium.model === 'henry' || equilibrium.model === 'raoult' || equilibrium.model === 'constant-ratio';
 }
 
 /** Onda's constants, which go into the tables. */

@@ -6,7 +6,7 @@ import { DATUM_TEMPERATURE, type Fluids } from './fluids.ts';
 import { fillVessel, gravityVolume } from './vessel.ts';
 
 /** What a cell is filled with. */
-export interface CellFill {
+interface CellFill {
   /** m3/m3 */ readonly holdup: number;
   /** K */ readonly TL: number;
   /** Mole fractions of the solutes in the liquid. */ readonly x: Float64Array;
@@ -16,7 +16,7 @@ export interface CellFill {
 }
 
 /** Writes one cell's states. */
-export function fillCell(
+function fillCell(
   fluids: Fluids,
   chain: Chain,
   molarVolume: (T: number) => number,

@@ -25,7 +25,7 @@ export interface ChannelValues {
   nonReturnValveLeak: number;
 }
 
-export interface ControllerMode {
+interface ControllerMode {
   automatic: boolean;
   setpoint: number;
   manualOutput: number;

@@ -19,7 +19,7 @@ const PLENUM_HEIGHT = 0.3;
  * @param carrierHeat - J/(mol K).
  * @returns K.
  */
-export function gasTemperature(excess: number, sensible: number, PV: number, carrierHeat: number): number {
+function gasTemperature(excess: number, sensible: number, PV: number, carrierHeat: number): number {
   const b = excess * DATUM_TEMPERATURE + (PV * carrierHeat) / GAS_CONSTANT - sensible;
   const root = Math.sqrt(b * b + 4 * excess * sensible * DATUM_TEMPERATURE);
   return DATUM_TEMPERATURE + (2 * sensible * DATUM_TEMPERATURE) / (b + root);

@@ -17,7 +17,7 @@ const FOOT = 0.01;
  * Heat capacity of a vessel's metal over that of its normal contents. It also keeps the temperature defined when the
  * vessel is empty. Judgement: some 2 kg of steel for 20 kg of water.
  */
-export const METAL_SHARE = 0.01;
+const METAL_SHARE = 0.01;
 /** Volume below which concentrations fade, over the normal volume. */
 const TRACE = 1e-7;
 

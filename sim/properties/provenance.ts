@@ -8,7 +8,7 @@
  * - `computed`: follows from other entries by the named rule;
  * - `demo`: invented for an example, to be overridden.
  */
-export type Verified = 'seen' | 'from memory' | 'computed' | 'demo';
+type Verified = 'seen' | 'from memory' | 'computed' | 'demo';
 
 /** A value, where it comes from, and how far that was checked. */
 export interface Sourced<V = number> {

@@ -17,7 +17,7 @@ export const CLOSURE_TARGET = 1e-6;
 export const CLOSURE_LIMIT = 1e-4;
 
 /** Inventories of solvent, solutes, carrier, energy; length components + 2. The column must have been evaluated at `y`. */
-export function inventories(column: Column, y: Float64Array): Float64Array {
+function inventories(column: Column, y: Float64Array): Float64Array {
   const { layout, machinery, index } = column;
   const { components, block } = layout;
   const sum = new Float64Array(components + 2);

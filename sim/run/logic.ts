@@ -7,14 +7,14 @@ import type { Action, Case, Condition, Scenario } from '../case/case.ts';
 import type { RunEvent } from './events.ts';
 
 /** A shown value against a number. */
-export interface Comparator {
+interface Comparator {
   readonly instrument: number;
   readonly kind: 'above' | 'below';
   readonly value: number;
 }
 
 /** Actions that became due, for the run to carry out. */
-export interface Due {
+interface Due {
   readonly actions: readonly Action[];
   readonly role: 'upset' | 'action' | 'interlock';
   readonly tag: string;

@@ -8,7 +8,7 @@ import { createNoise, type Noise } from './noise.ts';
 import { createSignalHistory, type SignalHistory, type SignalHistoryState } from './signal-history.ts';
 
 /** An instrument's fault and memory. */
-export interface InstrumentMode {
+interface InstrumentMode {
   fault: 'none' | 'frozen' | 'failed-high' | 'failed-low';
   /** Value it stands at while frozen or between samples, SI. */
   held: number;

@@ -602,7 +602,7 @@ function structuredCopy<T>(value: T): T {
 }
 
 /** Which part of the plant a state belongs to, in words. */
-export function stateName(plant: Case, column: Column, state: number): string {
+function stateName(plant: Case, column: Column, state: number): string {
   const { layout } = column;
   const parts = (r: number): string => {
     const { components } = layout;

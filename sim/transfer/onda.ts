@@ -19,7 +19,7 @@ export interface GroupRange {
 }
 
 /** Ranges of the wetted-area correlation; from memory, [Onda1968] after [Onda1967]. */
-export const ONDA_RANGES: readonly GroupRange[] = [
+const ONDA_RANGES: readonly GroupRange[] = [
   { name: 'ReL', min: 0.04, max: 500 },
   { name: 'FrL', min: 2.5e-9, max: 1.8e-2 },
   { name: 'WeL', min: 1.2e-8, max: 0.27 },

@@ -163,7 +163,7 @@ export const propanol: Solute = {
   note: 'weakest Henry constant of the list',
 };
 
-export const ammonia: Solute = {
+const ammonia: Solute = {
   id: 'ammonia',
   name: 'ammonia',
   cas: '7664-41-7',
@@ -178,7 +178,7 @@ export const ammonia: Solute = {
   note: 'molecular NH3: ionisation is negligible above 0.01 mol/L; the real solution exceeds Henry by 29 % at 8.8 mol/kg',
 };
 
-export const sulphurDioxide: Solute = {
+const sulphurDioxide: Solute = {
   id: 'sulphur-dioxide',
   name: 'sulphur dioxide',
   cas: '7446-09-5',
@@ -193,7 +193,7 @@ export const sulphurDioxide: Solute = {
   note: 'molecular SO2 only: in pure water most of a dilute solution is ionised',
 };
 
-export const hydrogenSulphide: Solute = {
+const hydrogenSulphide: Solute = {
   id: 'hydrogen-sulphide',
   name: 'hydrogen sulphide',
   cas: '7783-06-4',
@@ -208,7 +208,7 @@ export const hydrogenSulphide: Solute = {
   note: 'molecular H2S only',
 };
 
-export const carbonDioxide: Solute = {
+const carbonDioxide: Solute = {
   id: 'carbon-dioxide',
   name: 'carbon dioxide',
   cas: '124-38-9',
@@ -223,7 +223,7 @@ export const carbonDioxide: Solute = {
   note: 'molecular CO2 only',
 };
 
-export const chlorine: Solute = {
+const chlorine: Solute = {
   id: 'chlorine',
   name: 'chlorine',
   cas: '7782-50-5',
@@ -239,7 +239,7 @@ export const chlorine: Solute = {
 };
 
 /** A strong acid has no linear Henry constant; the entry serves gas-side control only. */
-export const hydrogenChloride: Solute = {
+const hydrogenChloride: Solute = {
   id: 'hydrogen-chloride',
   name: 'hydrogen chloride',
   cas: '7647-01-0',

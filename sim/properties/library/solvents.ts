@@ -74,7 +74,7 @@ export const water: Solvent = {
 };
 
 /** Numbers of an oil; every one may be overridden by a case. */
-export interface OilData {
+interface OilData {
   /** kg/mol. */
   readonly molarMass: Sourced;
   /** Temperature at which density, viscosity and surface tension are given, K. */
@@ -103,7 +103,7 @@ export interface OilData {
  * A heavy hydrocarbon oil as used to wash benzene out of gas: M 260, density, viscosity and surface
  * tension near 300 K are those of the textbook example; how they move with temperature is demo data.
  */
-export const HEAVY_OIL_DATA: OilData = {
+const HEAVY_OIL_DATA: OilData = {
   molarMass: seen(0.26, '[Treybal1980] illustrations 6.6 and 8.2'),
   TRef: seen(300, '[Treybal1980] illustration 6.6'),
   density: seen(840, '[Treybal1980] illustration 6.6'),
@@ -126,7 +126,7 @@ export const HEAVY_OIL_DATA: OilData = {
  * @returns A solvent, 283-343 K. Vapour pressure zero: an oil of M 260 has some Pa at most.
  * Source: viscosity [Andrade1934]; the rest linear by definition.
  */
-export function oilSolvent(data: OilData, id = 'heavy-oil', name = 'heavy absorption oil'): Solvent {
+function oilSolvent(data: OilData, id = 'heavy-oil', name = 'heavy absorption oil'): Solvent {
   const TRef = data.TRef.value;
   const density = (T: number): number => data.density.value + data.densitySlope.value * (T - TRef);
   return {
