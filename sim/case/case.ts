@@ -256,7 +256,6 @@ export interface LiquidSupply {
     /** Inertial time constant of w = 1/(1 + t/T), s. */ readonly coastDown: number;
     /** To 95 % of speed, s. */ readonly runUp: number;
     /** Sump level below which suction starves, m (recirculated). */ readonly minimumLevel: number;
-    readonly nonReturnValves: boolean;
   };
   /** Control valve in the solvent line. */ readonly valve: { readonly tag: string; readonly stroke: number };
   /** Liquid held at the design rate, m3. */ readonly distributorVolume: number;

@@ -67,7 +67,6 @@ export const LIQUID = {
   coastDown: judged(0.6, 'inertia of a small motor pump, judgement'),
   runUp: judged(1.5),
   minimumLevel: judged(0.15),
-  nonReturnValves: judged(true, PRACTICE),
   valveTag: judged('FV-1', 'name given by the program'),
   stroke: judged(5, 'about 1 s for each inch of bore, practitioners rule'),
   drainStroke: judged(2),

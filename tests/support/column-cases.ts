@@ -143,7 +143,6 @@ export const absorber: Case = {
       coastDown: 0.6,
       runUp: 1.5,
       minimumLevel: 0.1,
-      nonReturnValves: true,
     },
     valve: { tag: 'FV-311', stroke: 3 },
     distributorVolume: 0.02,

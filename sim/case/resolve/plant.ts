@@ -157,7 +157,6 @@ export function readLiquid(
       coastDown: reading.fill('liquid.pumps.coastDown', pumps.coastDown, LIQUID.coastDown),
       runUp: reading.fill('liquid.pumps.runUp', pumps.runUp, LIQUID.runUp),
       minimumLevel,
-      nonReturnValves: reading.fill('liquid.pumps.nonReturnValves', pumps.nonReturnValves, LIQUID.nonReturnValves),
     },
     valve: {
       tag: reading.fill('liquid.valve.tag', given.valve?.tag, LIQUID.valveTag),

@@ -64,7 +64,6 @@ export const liquidSchema = group({
     coastDown: lag('T of w = 1/(1 + t/T)'),
     runUp: lag('to 95 % of the speed'),
     minimumLevel: maybe(quantity('length', NOT_NEGATIVE, 'sump level below which suction starves')),
-    nonReturnValves: maybe(yesNo('one at each pump')),
   }),
   valve: maybe(group({ tag: tag(), stroke })),
   distributorVolume: maybe(quantity('volume', { min: 0, max: 100 }, 'liquid held at the design rate')),
