@@ -129,7 +129,7 @@ describe('a step in the feed’s strength', () => {
     { A: 1.3, NOG: 5, gasMoment: 0.054489, liquidMoment: 0.240318 },
     { A: 2.5, NOG: 8, gasMoment: 0.001972, liquidMoment: 0.078829 },
   ])(
-    'A $A, NOG $NOG: area between outlet and its final value, and the slopes at the start',
+    'A $A, NOG $NOG: area between outlet and its final value',
     ({ A, NOG, gasMoment, liquidMoment }) => {
       const tauG = 0.5;
       const tauL = 50;
@@ -155,12 +155,21 @@ describe('a step in the feed’s strength', () => {
       // The gas's moment counts from Theta = 0, t = tauG. Trapezoids over the gas front: 0.25 s of 50 s.
       expect(Math.abs((area(y, final) - final * tauG) / sum - gasMoment)).toBeLessThan(0.01 * gasMoment);
       expect(Math.abs(area(X, (1 - final) / A) / sum - liquidMoment)).toBeLessThan(0.003 * liquidMoment);
-      // Liquid: dX/dTheta = N/A at once; over the first 1 s, while the gas front passes, the curve has turned by 3 %.
-      const slope = (X[8]! - X[4]!) / ((4 * dt) / sum);
-      expect(Math.abs(slope / (NOG / A) - 1)).toBeLessThan(0.12);
-      expect(slope).toBeLessThan(NOG / A);
     },
   );
+
+  it.each(sets)('A $A, NOG $NOG: the liquid outlet sets out with the slope N/A in Theta', ({ A, NOG }) => {
+    const tauL = 50;
+    const { column, rest, liquid } = clean({ NOG, A, tauG: 0.01, tauL });
+    const X: number[] = [];
+    march(column, rest, evenly(6, 2), (t, s) => X.push(liquid(outletAt(column, t, s).c[0]!)), {
+      events: [{ at: 0, act: stepGas }],
+    });
+    // X/t at 2, 4 and 6 s, carried back to t = 0 by a parabola: the curve bends at once, by NOG a bed height.
+    const [, q1, q2, q3] = X.map((v, i) => (v * (tauL + 0.01)) / (2 * i));
+    const slope = 3 * q1! - 3 * q2! + q3!;
+    expect(Math.abs(slope / (NOG / A) - 1)).toBeLessThan(0.03);
+  });
 });
 
 describe('a step in the liquid’s strength', () => {
@@ -199,7 +208,8 @@ describe('a step in the liquid’s strength', () => {
       { events: [{ at: 0, act: (c) => stepLiquid(c, m) }] },
     );
     // The project's bar is 1 % of the final value; the front now runs down with the liquid, and its jump is exp(-N/A).
-    expect(worstGas).toBeLessThan(0.005);
+    // Measured 0.2 % to 0.6 %, the most at NOG 8.
+    expect(worstGas).toBeLessThan(0.01);
     expect(worstLiquid / (1 - (A * (1 - gasLeft(NOG / A, 1 / A))) / A)).toBeLessThan(0.01);
   });
 
