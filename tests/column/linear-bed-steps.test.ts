@@ -128,35 +128,32 @@ describe('a step in the feed’s strength', () => {
     { A: 0.7, NOG: 3, gasMoment: 0.162442, liquidMoment: 0.310098 },
     { A: 1.3, NOG: 5, gasMoment: 0.054489, liquidMoment: 0.240318 },
     { A: 2.5, NOG: 8, gasMoment: 0.001972, liquidMoment: 0.078829 },
-  ])(
-    'A $A, NOG $NOG: area between outlet and its final value',
-    ({ A, NOG, gasMoment, liquidMoment }) => {
-      const tauG = 0.5;
-      const tauL = 50;
-      const sum = tauG + tauL;
-      const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
-      const y: number[] = [];
-      const X: number[] = [];
-      const dt = 0.25;
-      march(
-        column,
-        rest,
-        evenly(8 * sum, dt),
-        (t, state) => {
-          const outlet = outletAt(column, t, state);
-          y.push(gas(outlet.y[0]!));
-          X.push(liquid(outlet.c[0]!));
-        },
-        { events: [{ at: 0, act: stepGas }] },
-      );
-      const final = gasLeft(NOG, A);
-      const area = (series: number[], end: number): number =>
-        series.reduce((s, v, i) => s + (i === 0 ? 0.5 : 1) * (end - v) * dt, 0);
-      // The gas's moment counts from Theta = 0, t = tauG. Trapezoids over the gas front: 0.25 s of 50 s.
-      expect(Math.abs((area(y, final) - final * tauG) / sum - gasMoment)).toBeLessThan(0.01 * gasMoment);
-      expect(Math.abs(area(X, (1 - final) / A) / sum - liquidMoment)).toBeLessThan(0.003 * liquidMoment);
-    },
-  );
+  ])('A $A, NOG $NOG: area between outlet and its final value', ({ A, NOG, gasMoment, liquidMoment }) => {
+    const tauG = 0.5;
+    const tauL = 50;
+    const sum = tauG + tauL;
+    const { column, rest, gas, liquid } = clean({ NOG, A, tauG, tauL });
+    const y: number[] = [];
+    const X: number[] = [];
+    const dt = 0.25;
+    march(
+      column,
+      rest,
+      evenly(8 * sum, dt),
+      (t, state) => {
+        const outlet = outletAt(column, t, state);
+        y.push(gas(outlet.y[0]!));
+        X.push(liquid(outlet.c[0]!));
+      },
+      { events: [{ at: 0, act: stepGas }] },
+    );
+    const final = gasLeft(NOG, A);
+    const area = (series: number[], end: number): number =>
+      series.reduce((s, v, i) => s + (i === 0 ? 0.5 : 1) * (end - v) * dt, 0);
+    // The gas's moment counts from Theta = 0, t = tauG. Trapezoids over the gas front: 0.25 s of 50 s.
+    expect(Math.abs((area(y, final) - final * tauG) / sum - gasMoment)).toBeLessThan(0.01 * gasMoment);
+    expect(Math.abs(area(X, (1 - final) / A) / sum - liquidMoment)).toBeLessThan(0.003 * liquidMoment);
+  });
 
   it.each(sets)('A $A, NOG $NOG: the liquid outlet sets out with the slope N/A in Theta', ({ A, NOG }) => {
     const tauL = 50;
