@@ -50,6 +50,12 @@ const CLOSING_BAND = 0.03;
 /** Effective supply of a segment that takes all there is, m/s. */
 export const UNLIMITED_VELOCITY = 1e6;
 
+/** 1 while a segment has room, falling to 0 over the last of its voids; `full` is the most that it holds. */
+export function closingShare(holdup: number, full: number, voidFraction: number): number {
+  const room = (full - holdup) / (CLOSING_BAND * voidFraction);
+  return room < 1 ? (room > 0 ? room : 0) : 1;
+}
+
 /**
  * Stichlmair, Bravo and Fair's hold-up solved for the liquid velocity, with the static part carved out.
  *
@@ -68,7 +74,6 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
   const scale = Math.sqrt((p.gravity * Math.pow(eps, 4.65)) / p.area);
   const solid = 1 - eps;
   const spread = Math.max(0.5 * hs, 1e-9);
-  const closing = CLOSING_BAND * eps;
 
   /** Velocity, gradient and loading at a hold-up within (hs, full); fields, since closed-over numbers would be boxed. */
   const branch = { u: 0.5, gradient: 0.5, loading: 0.5 };
@@ -126,15 +131,14 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
         out.supply = u > floor ? u : floor;
         out.demand = capacity(dry, c);
       }
-      const room = (fullHoldup - holdup) / closing;
-      if (room < 1) out.supply = room > 0 ? Math.min(out.supply, 10 * out.demand) * room : 0;
+      const room = closingShare(holdup, fullHoldup, eps);
+      if (room < 1) out.supply = Math.min(out.supply, 10 * out.demand) * room;
     },
   };
 }
 
 /** u = k h^n, no pressure drop, never floods but closes when full. For closed forms and user fits. */
 export function powerLawDrainage(k: number, n: number, fullHoldup: number, voidFraction: number): HydraulicLaw {
-  const closing = CLOSING_BAND * voidFraction;
   return {
     staticHoldup: 0,
     capacity: () => UNLIMITED_VELOCITY,
@@ -143,8 +147,8 @@ export function powerLawDrainage(k: number, n: number, fullHoldup: number, voidF
       out.supply = UNLIMITED_VELOCITY;
       out.gradient = 0;
       out.loading = 0;
-      const room = (fullHoldup - holdup) / closing;
-      if (room < 1) out.supply = room > 0 ? 10 * out.demand * room : 0;
+      const room = closingShare(holdup, fullHoldup, voidFraction);
+      if (room < 1) out.supply = 10 * out.demand * room;
     },
   };
 }

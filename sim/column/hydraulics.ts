@@ -62,7 +62,7 @@ export function createHydraulicLaw(plant: Case, fluids: Fluids, bed: Bed): Hydra
     };
   }
   if (hydraulics.model === 'billet-schultes')
-    return createBilletDrainage(plant, fluids, bed, staticHoldupOf(plant, fluids, bed));
+    return createBilletDrainage(plant, bed, staticHoldupOf(plant, fluids, bed));
   const staticHoldup = staticHoldupOf(plant, fluids, bed);
   const friction = packing.friction ?? { C1: 0, C2: 0, C3: 0 };
   const { C1, C2, C3 } = friction;
