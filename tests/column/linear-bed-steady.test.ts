@@ -9,13 +9,32 @@ import { settled } from '../support/column-runs.ts';
 const EXACT = 1e-6;
 
 describe('absorption', () => {
-  const NOGs = [1, 2, 5, 8, 12];
+  const NOGs = Array.from({ length: 12 }, (_, i) => i + 1);
   const factors = [0.5, 0.7, 1, 1.3, 2, 3];
   it.each(NOGs)('with %d transfer units leaves what Colburn gives, for absorption factors 0.5 to 3', (NOG) => {
     for (const A of factors) {
       const { outlet } = settled(linearBed({ NOG, A }));
       expect(Math.abs(outlet.y[0]! / TRACE / gasLeft(NOG, A) - 1)).toBeLessThan(EXACT);
     }
+  });
+
+  it('from liquid without end leaves exp(-NOG)', () => {
+    // A = 1000: what the liquid takes up moves y2/y1 by some NOG/A of itself.
+    const { outlet } = settled(linearBed({ NOG: 5, A: 1000 }));
+    expect(Math.abs(outlet.y[0]! / TRACE / Math.exp(-5) - 1)).toBeLessThan(0.01);
+  });
+
+  it.each([
+    // Six digits of the closed form, evaluated independently.
+    { A: 0.7, NOG: 3, gas: 0.371986 },
+    { A: 1.3, NOG: 5, gas: 0.096108 },
+    { A: 2.5, NOG: 8, gas: 0.004954 },
+  ])('A $A, NOG $NOG: what gas alone and liquid alone leave in the gas adds up to one', ({ A, NOG, gas }) => {
+    const m = linearSlope(linearBed({ NOG, A }));
+    const fromGas = settled(linearBed({ NOG, A })).outlet.y[0]! / TRACE;
+    const fromLiquid = settled(linearBed({ NOG, A, yIn: 0, xIn: TRACE / m })).outlet.y[0]! / TRACE;
+    expect(Math.abs(fromGas - gas)).toBeLessThan(6e-7);
+    expect(Math.abs(fromGas + fromLiquid - 1)).toBeLessThan(2 * EXACT);
   });
 
   it('does not depend on the number of segments', () => {
