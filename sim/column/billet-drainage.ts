@@ -24,6 +24,11 @@ const FLOOD_HIGH = { n: -0.708, factor: 0.6244, ratioPower: 0.1028 };
 const REPORTED_POWER = 9;
 /** Share of the room above the flood hold-up over which a flooded segment closes to the de-flooding capacity. */
 const CLOSING = 0.25;
+/** Share of the flood velocity from which a segment begins to refuse more than the capacity, smoothly; judgement. */
+const LN_NEAR = Math.log(0.9);
+const APPROACH = 0.025;
+/** Share of the voids up to which the flood film is followed in the search for the capacity. */
+const FULLEST = 0.98;
 /** Newton's steps: it comes from the right on a convex function; seen at most 9 for 1e-13. */
 const MAX_STEPS = 40;
 const CONVERGED = 1e-13;
@@ -38,9 +43,11 @@ interface Held {
   lnUnloaded: number;
   lnHoldup: number;
   slope: number;
-  /** Gas velocity over the flooding one at this liquid rate; hold-up at flooding. */
-  share: number;
-  flood: number;
+  /** Gas velocity over the flooding one at this liquid rate, as ln, and its slope in ln u. */
+  lnShare: number;
+  shareSlope: number;
+  /** Hold-up at flooding above the unloaded one. */
+  rise: number;
 }
 
 /** Builds the law of one bed; the case has made sure that the packing has its constants. */
@@ -51,7 +58,7 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
   const { deflooding, fullShare } = plant.column.flooding;
   const { diameter } = plant.column;
   const C1 = 13_300 / (a * Math.sqrt(a)); // [Billet1999]; see `billetWetFactor`
-  const held: Held = { lnUnloaded: 0.5, lnHoldup: 0.5, slope: 0.5, share: 0.5, flood: 0.5 };
+  const held: Held = { lnUnloaded: 0.5, lnHoldup: 0.5, slope: 0.5, lnShare: 0.5, shareSlope: 0.5, rise: 0.5 };
   const nLow = holdupExponent(LOW.power);
   const nHigh = holdupExponent(HIGH.power);
   /** Of the fluids at hand: scales of the two branches, of the flood film, of the flooding velocity. */
@@ -107,22 +114,23 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
     const lnShare = lnGas - Math.min(floodLow, floodHigh);
     const weight = Math.exp(Math.min(LOADING_POWER * lnShare, 300));
     const unloaded = Math.exp(lnUnloaded);
-    const holdup = unloaded + (h - unloaded) * weight;
+    const rise = h > unloaded ? h - unloaded : 0; // a film so thick that it floods without gas has nothing to rise to
+    const holdup = unloaded + rise * weight;
     const floodSlope = free > 0 ? (fluid.film * u) / (h * h * (12 * h - 3 * eps)) : 0; // dh/d ln u
     const shareSlope = free > 0 ? -(n + (0.5 / h - 1.5 / free) * floodSlope) / (1 + n) : 0;
     const n0 = isLow ? nLow : nHigh;
     held.lnUnloaded = lnUnloaded;
     held.lnHoldup = Math.log(holdup);
-    held.slope =
-      (unloaded * n0 * (1 - weight) + weight * (floodSlope + LOADING_POWER * (h - unloaded) * shareSlope)) / holdup;
-    held.share = Math.exp(lnShare);
-    held.flood = h;
+    const riseSlope = rise > 0 ? floodSlope - unloaded * n0 : 0;
+    held.slope = (unloaded * n0 + weight * (riseSlope + LOADING_POWER * rise * shareSlope)) / holdup;
+    held.lnShare = lnShare;
+    held.shareSlope = shareSlope;
+    held.rise = rise;
   };
 
-  /** ln u at which the law holds `hd`; leaves `held` there. */
-  const rateAt = (hd: number, lnGas: number): number => {
-    const lnH = Math.log(hd);
-    let x = Math.min((lnH - fluid.low) / nLow, (lnH - fluid.high) / nHigh); // as if unloaded: not less than the root
+  /** ln u at which the law holds what ln H says, coming from the right; leaves `held` there. */
+  const rateAt = (start: number, lnH: number, lnGas: number): number => {
+    let x = start;
     for (let k = 0; k < MAX_STEPS; k++) {
       holdAt(x, lnGas);
       const step = (held.lnHoldup - lnH) / held.slope;
@@ -132,16 +140,13 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
     return x;
   };
 
-  /** ln of the liquid rate that floods at this gas velocity; `start` is flooded. */
+  /** ln of the liquid rate that floods at this gas velocity, from a rate above it. */
   const capacityAt = (start: number, lnGas: number): number => {
-    let x = start;
+    let x = Math.min(start, Math.log((FULLEST * FULLEST * FULLEST * (3 * FULLEST - 1) * fluid.eps ** 4) / fluid.film));
     for (let k = 0; k < MAX_STEPS; k++) {
       holdAt(x, lnGas);
-      const d = 1e-4;
-      const lnShare = Math.log(held.share);
-      holdAt(x - d, lnGas);
-      const step = (lnShare * d) / (lnShare - Math.log(held.share));
-      if (!(Math.abs(step) > 1e-12 * Math.max(1, Math.abs(x)))) break;
+      const step = held.lnShare / held.shareSlope;
+      if (!(Math.abs(step) > CONVERGED * Math.max(1, Math.abs(x)))) break;
       x -= step;
     }
     return x;
@@ -164,23 +169,34 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
       }
       setFluids(eps, rhoL, muL, rhoG, muG);
       const lnGas = Math.log(uG > LEAST_VELOCITY ? uG : LEAST_VELOCITY);
-      const x = rateAt(hd, lnGas);
+      const lnH = Math.log(hd);
+      const unloaded = Math.min((lnH - fluid.low) / nLow, (lnH - fluid.high) / nHigh); // not less than the rate sought
+      holdAt(unloaded, lnGas);
+      // The rate that floods at this gas velocity, wanted near flooding only.
+      const isBelow = held.lnShare < 0;
+      const capacity = held.lnShare < LN_NEAR ? Infinity : capacityAt(isBelow ? unloaded + 1 : unloaded, lnGas);
+      if (!isBelow) holdAt(capacity, lnGas);
+      const isFlooded = !isBelow && lnH >= held.lnHoldup;
+      const x = isFlooded ? capacity : rateAt(isBelow ? unloaded : capacity, lnH, lnGas);
       const u = Math.exp(x);
-      const { lnUnloaded, share, flood } = held;
-      const raised = Math.log(hd) - lnUnloaded; // of the hold-up over the unloaded one, before flooding
-      out.loading = Math.exp(REPORTED_POWER * Math.log(share));
+      const atFlood = Math.exp(held.lnHoldup);
+      // Beyond flooding the share goes on with the slope that it has there.
+      const beyond = isFlooded ? (LOADING_POWER * held.rise) / atFlood : 1;
+      const lnShare = isFlooded ? (beyond > 0 ? (lnH - held.lnHoldup) / beyond : 0) : held.lnShare;
+      out.loading = Math.exp(REPORTED_POWER * Math.min(lnShare, 10));
       out.gradient =
-        dry * Math.exp(1.5 * Math.log(eps / (eps - h)) + 0.3 * raised + C1 * u * Math.sqrt(a / STANDARD_GRAVITY));
-      if (share < 1) {
-        out.demand = u;
-        out.supply = UNLIMITED_VELOCITY;
+        dry *
+        Math.exp(
+          1.5 * Math.log(eps / (eps - h)) + 0.3 * (lnH - held.lnUnloaded) + C1 * u * Math.sqrt(a / STANDARD_GRAVITY),
+        );
+      out.demand = u;
+      if (!isFlooded) {
+        const short = lnShare / APPROACH;
+        out.supply = lnShare < LN_NEAR ? UNLIMITED_VELOCITY : Math.exp(capacity + short * short);
       } else {
-        const capacity = capacityAt(x, lnGas);
-        const most = Math.exp(capacity);
         const least = Math.exp(capacityAt(capacity, lnGas - Math.log(deflooding)));
-        const beyond = (hd - flood) / (CLOSING * (full - eps / 3));
-        out.demand = most;
-        out.supply = least + (most - least) * Math.exp(-beyond * beyond);
+        const fuller = (hd - atFlood) / (CLOSING * (full - eps / 3));
+        out.supply = least + (u - least) * Math.exp(-fuller * fuller);
       }
       const room = closingShare(holdup, full, clean);
       if (room < 1) out.supply = Math.min(out.supply, 10 * out.demand) * room;
