@@ -84,6 +84,12 @@ export interface Plant {
   readonly passThrough: boolean;
 }
 
+/** A valve's opening: its position, which the integration may leave a tolerance beyond shut. */
+function opening(y: Float64Array, valve: number): number {
+  const position = y[valve];
+  return position > 0 ? position : 0;
+}
+
 /** Everything the plant needs. */
 export interface PlantParts {
   readonly plant: Case;
@@ -180,9 +186,9 @@ export function createPlant(parts: PlantParts): Plant {
 
   const gasSupply = (y: Float64Array): void => {
     flows.gasSource = y[layout.gasFlow];
-    const diverted = y[layout.valves.diversion];
+    const diverted = opening(y, layout.valves.diversion);
     flows.gasDiverted = flows.gasSource * diverted;
-    flows.gasToBed = flows.gasSource * (1 - diverted) * y[layout.valves['gas-inlet']];
+    flows.gasToBed = flows.gasSource * (1 - diverted) * opening(y, layout.valves['gas-inlet']);
     const T = channels.gasTemperature;
     flows.feedTemperature = T;
     flows.feedY[0] = fluids.isVolatile
@@ -209,7 +215,9 @@ export function createPlant(parts: PlantParts): Plant {
     const speed = Math.max(y[layout.pumpSpeed[0]], y[layout.pumpSpeed[1]]);
     const idleLeak = 1 - channels.nonReturnValveLeak;
     let rate =
-      liquid.feed.rate * pumpDelivery(speed, liquid.pumps.staticHeadShare, y[layout.valves.solvent]) * idleLeak;
+      liquid.feed.rate *
+      pumpDelivery(speed, liquid.pumps.staticHeadShare, opening(y, layout.valves.solvent)) *
+      idleLeak;
     if (!isRecirculated) {
       freshLiquid(flows.delivery, rate, channels.liquidTemperature, channels.liquidComposition);
     } else {
@@ -233,20 +241,26 @@ export function createPlant(parts: PlantParts): Plant {
     }
     if (liquid.emergencyWater !== undefined) {
       const e = liquid.emergencyWater;
-      freshLiquid(flows.emergency, e.rate * y[layout.valves['emergency-water']], e.temperature, emergencyComposition);
+      freshLiquid(
+        flows.emergency,
+        e.rate * opening(y, layout.valves['emergency-water']),
+        e.temperature,
+        emergencyComposition,
+      );
     }
     if (liquid.makeUp !== undefined) {
       const m = liquid.makeUp;
       freshLiquid(
         flows.makeUp,
-        m.capacity * y[layout.valves['make-up']],
+        m.capacity * opening(y, layout.valves['make-up']),
         channels.makeUpTemperature,
         channels.makeUpComposition,
       );
     }
     const open = gravityOutflow(level() / liquid.sump.normalLevel);
-    flows.drain = isRecirculated ? 0 : liquid.sump.drain.capacity * y[layout.valves.drain] * open;
-    flows.bleed = liquid.bleed === undefined ? 0 : liquid.bleed.capacity * y[layout.valves.bleed] * Math.min(1, open);
+    flows.drain = isRecirculated ? 0 : liquid.sump.drain.capacity * opening(y, layout.valves.drain) * open;
+    flows.bleed =
+      liquid.bleed === undefined ? 0 : liquid.bleed.capacity * opening(y, layout.valves.bleed) * Math.min(1, open);
     const above = level() - liquid.sump.overflowLevel;
     flows.overflow = above > 0 ? (above * liquid.sump.area) / OVERFLOW_TIME : 0;
   };
@@ -387,7 +401,7 @@ export function createPlant(parts: PlantParts): Plant {
   };
 
   const gasRates = (y: Float64Array, dydt: Float64Array): void => {
-    const damper = y[layout.valves['gas-damper']];
+    const damper = opening(y, layout.valves['gas-damper']);
     const { source } = gas;
     if (source.kind === 'forced') {
       dydt[layout.gasFlow] = (channels.gasRate * damper - y[layout.gasFlow]) / Math.max(source.lag, LEAST_LAG);
