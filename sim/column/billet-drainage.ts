@@ -1,15 +1,15 @@
 /**
  * Billet and Schultes' hold-up between loading and flooding as a drainage law: solved for the liquid rate at the hold-up
- * that is there. At their flood point the liquid rate is the most that can pass; a segment that holds more passes that
- * and takes ever less from above, down to the capacity at a higher gas rate, u_G / deflooding: a deliberate law, stated
- * in the case, since no correlation holds there. Static part carved out as in Stichlmair's law.
+ * that is there. At their flood point the liquid rate is the most that can pass; a segment that holds more passes ever
+ * less, down to the capacity at a higher gas rate, u_G / deflooding: a deliberate law, stated in the case, since no
+ * correlation holds there (see `hydraulic-law.ts`). Static part carved out as in Stichlmair's law.
  */
 import type { Bed, Case } from '../case/case.ts';
 import { invariant } from '../errors.ts';
 import { STANDARD_GRAVITY } from '../properties/constants.ts';
 import { billetDryPressureDrop } from '../transfer/billet-pressure-drop.ts';
 import { drainableHoldup } from '../transfer/static-holdup.ts';
-import { closingShare, UNLIMITED_VELOCITY, type HydraulicState } from './hydraulic-law.ts';
+import { closingSupply, UNLIMITED_VELOCITY, type HydraulicState } from './hydraulic-law.ts';
 import type { Hydraulics } from './hydraulics.ts';
 
 /** Factors and powers of the hydraulic area below and above Re = 5.08, [Billet1999]; see `billetHoldup`. */
@@ -22,11 +22,8 @@ const FLOOD_LOW = { n: -0.194, factor: 1, ratioPower: 0 };
 const FLOOD_HIGH = { n: -0.708, factor: 0.6244, ratioPower: 0.1028 };
 /** `loading` = (u_G/u_G,Fl)^9: 0.39 at 90 % of the flood velocity, about what Stichlmair's slope ratio is there. */
 const REPORTED_POWER = 9;
-/** Share of the room above the flood hold-up over which a flooded segment closes to the de-flooding capacity. */
-const CLOSING = 0.25;
-/** Share of the flood velocity from which a segment begins to refuse more than the capacity, smoothly; judgement. */
-const LN_NEAR = Math.log(0.9);
-const APPROACH = 0.025;
+/** Share of the room above the flood hold-up over which a flooded segment slows to the de-flooding capacity; judgement. */
+const SLOWING = 0.25;
 /** Share of the voids up to which the flood film is followed in the search for the capacity. */
 const FULLEST = 0.98;
 /** Newton's steps: it comes from the right on a convex function; seen at most 9 for 1e-13. */
@@ -172,9 +169,9 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
       const lnH = Math.log(hd);
       const unloaded = Math.min((lnH - fluid.low) / nLow, (lnH - fluid.high) / nHigh); // not less than the rate sought
       holdAt(unloaded, lnGas);
-      // The rate that floods at this gas velocity, wanted near flooding only.
+      // The rate that floods at this gas velocity, wanted only where the unloaded hold-up's rate floods.
       const isBelow = held.lnShare < 0;
-      const capacity = held.lnShare < LN_NEAR ? Infinity : capacityAt(isBelow ? unloaded + 1 : unloaded, lnGas);
+      const capacity = isBelow ? Infinity : capacityAt(unloaded, lnGas);
       if (!isBelow) holdAt(capacity, lnGas);
       const isFlooded = !isBelow && lnH >= held.lnHoldup;
       const x = isFlooded ? capacity : rateAt(isBelow ? unloaded : capacity, lnH, lnGas);
@@ -189,17 +186,14 @@ export function createBilletDrainage(plant: Case, bed: Bed, staticHoldup: number
         Math.exp(
           1.5 * Math.log(eps / (eps - h)) + 0.3 * (lnH - held.lnUnloaded) + C1 * u * Math.sqrt(a / STANDARD_GRAVITY),
         );
-      out.demand = u;
-      if (!isFlooded) {
-        const short = lnShare / APPROACH;
-        out.supply = lnShare < LN_NEAR ? UNLIMITED_VELOCITY : Math.exp(capacity + short * short);
-      } else {
+      if (isFlooded) {
         const least = Math.exp(capacityAt(capacity, lnGas - Math.log(deflooding)));
-        const fuller = (hd - atFlood) / (CLOSING * (full - eps / 3));
-        out.supply = least + (u - least) * Math.exp(-fuller * fuller);
+        const fuller = (hd - atFlood) / (SLOWING * (full - eps / 3));
+        out.demand = least + (u - least) * Math.exp(-fuller * fuller);
+      } else {
+        out.demand = u;
       }
-      const room = closingShare(holdup, full, clean);
-      if (room < 1) out.supply = Math.min(out.supply, 10 * out.demand) * room;
+      out.supply = closingSupply(holdup, full, eps, out.demand);
     },
   };
 }

@@ -1,8 +1,9 @@
 /**
  * Hold-up and pressure drop of one segment as a drainage law: what lets liquid go, given the hold-up that is there and
  * the gas that passes. The rising branch is a published correlation solved for the liquid rate. Past the flood point
- * (where more hold-up drains slower) the segment passes no more than the capacity it would have at a higher gas rate,
- * u_G / deflooding: a deliberate law, stated in the case, since no correlation holds there.
+ * more hold-up drains slower, down to the capacity that the segment would have at a higher gas rate, u_G / deflooding:
+ * a deliberate law, stated in the case, since no correlation holds there. So a segment that has flooded fills until it
+ * is full, and does not recover before the gas is below deflooding times the velocity that floods it.
  *
  * Gas load enters as `dry`, the dry pressure gradient over the liquid's weight, rho_L g.
  */
@@ -45,15 +46,25 @@ export interface StichlmairDrainage {
   readonly gravity: number;
 }
 
-/** Share of the voids over which a filling segment closes. */
+/** Share of the voids over which a filling segment closes, and what it takes in at half of that, over what it lets go. */
 const CLOSING_BAND = 0.03;
+const HALF_OPEN = 10;
 /** Effective supply of a segment that takes all there is, m/s. */
 export const UNLIMITED_VELOCITY = 1e6;
 
-/** 1 while a segment has room, falling to 0 over the last of its voids; `full` is the most that it holds. */
-export function closingShare(holdup: number, full: number, voidFraction: number): number {
+/**
+ * What a segment can take in, m/s: without limit while there is room, falling smoothly to nothing over the last of its
+ * voids, so that a full one takes in what it lets go.
+ *
+ * @param full - The most that it holds, m3/m3.
+ * @param demand - What it lets go, m/s.
+ */
+export function closingSupply(holdup: number, full: number, voidFraction: number, demand: number): number {
   const room = (full - holdup) / (CLOSING_BAND * voidFraction);
-  return room < 1 ? (room > 0 ? room : 0) : 1;
+  if (room >= 1) return UNLIMITED_VELOCITY;
+  if (room <= 0) return 0;
+  const supply = (HALF_OPEN * demand * room) / (1 - room);
+  return supply < UNLIMITED_VELOCITY ? supply : UNLIMITED_VELOCITY;
 }
 
 /**
@@ -64,6 +75,8 @@ export function closingShare(holdup: number, full: number, voidFraction: number)
  *   u  = (g eps^4.65 / a)^(1/2) [hd / (0.555 (1 + 20 P^2))]^(3/2),   hd = h {1 - exp[-((h - hs)/(hs/2))^2]}
  *
  * hd as in `drainableHoldup`: nothing drains at or below hs, and from 3 hs on the law is the paper's to 1e-6.
+ * Past the flood point u falls from u_max to nothing; let go is u_min + (u_max - u_min) u/u_max, u_min being u_max at
+ * u_G / deflooding.
  *
  * @remarks Below the flood point u rises with h; `loading` is the ratio of the two relative slopes, 1 at the flood point,
  *   which makes it Stichlmair's own flood condition. Source: [Stichlmair1989]; static part [Engel2001].
@@ -125,14 +138,12 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
       out.loading = loading;
       if (loading < 1) {
         out.demand = u;
-        out.supply = UNLIMITED_VELOCITY;
       } else {
-        const floor = capacity(dry * froth, c);
-        out.supply = u > floor ? u : floor;
-        out.demand = capacity(dry, c);
+        const most = capacity(dry, c);
+        const least = capacity(dry * froth, c);
+        out.demand = least + (u / most) * (most - least);
       }
-      const room = closingShare(holdup, fullHoldup, eps);
-      if (room < 1) out.supply = Math.min(out.supply, 10 * out.demand) * room;
+      out.supply = closingSupply(holdup, fullHoldup, eps, out.demand);
     },
   };
 }
@@ -144,11 +155,9 @@ export function powerLawDrainage(k: number, n: number, fullHoldup: number, voidF
     capacity: () => UNLIMITED_VELOCITY,
     evaluate(holdup, _dry, _c, out) {
       out.demand = holdup > 0 ? k * Math.exp(n * Math.log(holdup)) : 0;
-      out.supply = UNLIMITED_VELOCITY;
+      out.supply = closingSupply(holdup, fullHoldup, voidFraction, out.demand);
       out.gradient = 0;
       out.loading = 0;
-      const room = closingShare(holdup, fullHoldup, voidFraction);
-      if (room < 1) out.supply = 10 * out.demand * room;
     },
   };
 }

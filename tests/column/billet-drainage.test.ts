@@ -64,30 +64,42 @@ describe('below flooding', () => {
   it('drains nothing at the static hold-up, and more with more hold-up', () => {
     expect(at(STATIC, 2).demand).toBe(0);
     let last = 0;
-    for (let h = STATIC + 1e-4; h < 0.9 * packing.voidFraction; h += 1e-3) {
+    for (let h = STATIC + 1e-4; at(h, 1.5).loading < 1; h += 1e-3) {
       const { demand } = at(h, 1.5);
-      expect(demand).toBeGreaterThanOrEqual(last * (1 - 1e-12)); // beyond flooding it is constant but for rounding
+      expect(demand).toBeGreaterThan(last);
       last = demand;
     }
+    expect(Math.abs(floodVelocity(last) / 1.5 - 1)).toBeLessThan(0.01); // one step of 1e-3 short of flooding
+  });
+
+  it('lets go of the same at both sides of the flood point', () => {
+    // The hold-up whose rate is the one that floods: by bisection of the loading.
+    let low = 0.05;
+    let high = 0.6;
+    for (let i = 0; i < 60; i++) {
+      const middle = 0.5 * (low + high);
+      if (at(middle, 2.5).loading < 1) low = middle;
+      else high = middle;
+    }
+    expect(Math.abs(at(low, 2.5).demand / at(high, 2.5).demand - 1)).toBeLessThan(1e-9); // the search's 1e-13 on ln u
+    expect(Math.abs(floodVelocity(at(high, 2.5).demand) / 2.5 - 1)).toBeLessThan(2e-4); // as above
   });
 });
 
 describe('beyond flooding', () => {
   const uG = 2.5;
-  it('passes the capacity at this gas rate, whatever it holds', () => {
-    const passed = [0.4, 0.5, 0.7].map((h) => at(h, uG).demand);
-    // The flood velocity at that liquid rate is the gas rate [Billet1999].
-    expect(Math.abs(floodVelocity(passed[0]!) / uG - 1)).toBeLessThan(2e-4);
-    expect(passed[1]).toBeCloseTo(passed[0]!, 12);
-    expect(passed[2]).toBeCloseTo(passed[0]!, 12);
+  it('lets go of less the fuller it is, down to the capacity at a higher gas rate', () => {
+    const full = at(0.7, uG).demand;
+    expect(at(0.3, uG).demand).toBeGreaterThan(at(0.4, uG).demand);
+    expect(at(0.4, uG).demand).toBeGreaterThan(full);
+    expect(Math.abs(floodVelocity(full) / (uG / plant.column.flooding.deflooding) - 1)).toBeLessThan(0.02);
   });
 
-  it('takes less from above the fuller it is, down to the capacity at a higher gas rate', () => {
-    const least = at(0.7, uG).supply;
-    expect(Math.abs(floodVelocity(least) / (uG / plant.column.flooding.deflooding) - 1)).toBeLessThan(0.02);
-    expect(at(0.4, uG).supply).toBeGreaterThan(least);
-    expect(at(0.949 * packing.voidFraction, uG).supply).toBeLessThan(least);
-    expect(at(packing.voidFraction, uG).supply).toBe(0);
+  it('takes in whatever comes until it is full', () => {
+    const { voidFraction } = packing;
+    expect(at(0.8, uG).supply).toBeGreaterThan(1);
+    expect(at(0.895 * voidFraction, uG).supply).toBeLessThan(20 * at(0.895 * voidFraction, uG).demand);
+    expect(at(voidFraction, uG).supply).toBe(0);
   });
 
   it('comes sooner with foam and with deposits', () => {
