@@ -28,6 +28,11 @@ export interface SignalsState {
 export interface Signals extends ShownValues {
   readonly modes: InstrumentMode[];
   readonly history: SignalHistory;
+  /**
+   * While the plant is brought to its steady state: no time passes, so there is neither dead time, drift, noise nor
+   * sampling; bias, range and faults stay.
+   */
+  isAtRest: boolean;
   /** Slot of an instrument in the history, -1 without dead time. */ readonly slot: readonly number[];
   /** Before sampling, freezing and failing: dead time, bias, drift, noise. */
   conditioned(i: number, t: number, value: number): number;
@@ -74,9 +79,11 @@ export function createSignals(plant: Case): Signals {
     if (range === undefined) return value;
     return value < range[0] ? range[0] : value > range[1] ? range[1] : value;
   };
+  let isAtRest = false;
   const conditioned = (i: number, t: number, value: number): number => {
     const instrument = instruments[i];
     const mode = modes[i];
+    if (isAtRest) return value + instrument.bias + mode.bias;
     const base = slot[i] >= 0 ? history.at(slot[i], t - instrument.deadTime) : value;
     const slip = instrument.bias + instrument.drift * t + mode.bias + mode.drift * (t - mode.since);
     return base + slip + (noise[i]?.at(t) ?? 0);
@@ -87,6 +94,12 @@ export function createSignals(plant: Case): Signals {
     slot,
     controlDeadTime,
     conditioned,
+    get isAtRest() {
+      return isAtRest;
+    },
+    set isAtRest(value) {
+      isAtRest = value;
+    },
     shown(i, t, value) {
       const mode = modes[i];
       switch (mode.fault) {
@@ -97,7 +110,10 @@ export function createSignals(plant: Case): Signals {
         case 'failed-low':
           return instruments[i].range?.[0] ?? 0;
         case 'none':
-          return clipped(i, instruments[i].sampleInterval === undefined ? conditioned(i, t, value) : mode.held);
+          return clipped(
+            i,
+            isAtRest || instruments[i].sampleInterval === undefined ? conditioned(i, t, value) : mode.held,
+          );
       }
     },
     kinks(i, from, to) {

@@ -6,10 +6,10 @@
 import type { Action, Case, Scenario } from '../case/case.ts';
 import { createColumn, type Column } from '../column/column.ts';
 import { designChannels, type PlantModes } from '../column/modes.ts';
-import { controlError, piOutput } from '../control/pi-controller.ts';
 import { bracketedRoot } from '../numerics/bracketed-root.ts';
 import type { StepFailure, Stepper, StepperState, StepperStats } from '../numerics/ivp/stepper.ts';
 import { carryOut, type ActionTargets } from './actions.ts';
+import { controllerOutput } from './controller-output.ts';
 import type { RunEvent } from './events.ts';
 import { fitDuct, initialState } from './initial-state.ts';
 import { createEvaluation, type Evaluation } from './evaluation.ts';
@@ -119,8 +119,10 @@ export function createRun(plant: Case, scenario: Scenario, saved?: SavedRun): Ru
   const stepper = createColumnStepper(column, settings, evaluation);
   const run = new RunCore(plant, scenario, column, signals, programs, logic, recorder, evaluation, stepper);
   if (saved === undefined) {
+    signals.isAtRest = true;
     fitDuct(column); // a fan that is too small is said by the plant check; the run shows what it gives
     const start = initialState(column, scenario.initial);
+    signals.isAtRest = false;
     if (start.kind === 'failed') {
       run.fail({
         kind: 'integration',
@@ -499,18 +501,8 @@ class RunCore implements Run {
     return this.#signals.shown(i, t, this.#signals.slot[i] >= 0 ? 0 : this.#rawAt(i, t));
   }
   #controllerOutput(i: number, t: number): number {
-    const controller = this.plant.controllers[i];
-    const settings = {
-      gain: controller.gain,
-      integralTime: controller.integralTime,
-      sign: controller.action === 'direct' ? 1 : -1,
-      outputRange: controller.outputRange,
-    } as const;
-    const instrument = this.plant.instruments.findIndex((x) => x.tag === controller.instrument);
-    const mode = this.column.modes.controllers[i];
-    if (!mode.automatic) return mode.manualOutput;
-    const error = controlError(settings, mode.setpoint, this.#shownAt(instrument, t));
-    return piOutput(settings, this.#stepper.y[this.column.layout.controllers[i]], error);
+    const instrument = this.plant.instruments.findIndex((x) => x.tag === this.plant.controllers[i].instrument);
+    return controllerOutput(this.column, i, this.#stepper.y, this.#shownAt(instrument, t));
   }
 
   #record(t: number, y: Float64Array): void {
