@@ -8,6 +8,8 @@
  * Gas load enters as `dry`, the dry pressure gradient over the liquid's weight, rho_L g.
  */
 
+import { bracketedRoot } from '../numerics/bracketed-root.ts';
+
 /** What the law finds; one object reused. */
 export interface HydraulicState {
   /** Superficial liquid velocity that leaves, and that can enter, m/s. */
@@ -49,6 +51,9 @@ export interface StichlmairDrainage {
 /** Share of the voids over which a filling segment closes, and what it takes in at half of that, over what it lets go. */
 const CLOSING_BAND = 0.03;
 const HALF_OPEN = 10;
+/** Accuracy of the flood point's hold-up; the velocity there is at its top, so its own error is the square of this. */
+const FLOOD_POINT = 1e-8;
+const LEAST_LOADING = 1e-30;
 /** Effective supply of a segment that takes all there is, m/s. */
 export const UNLIMITED_VELOCITY = 1e6;
 
@@ -110,17 +115,27 @@ export function stichlmairDrainage(p: StichlmairDrainage): HydraulicLaw {
     branch.gradient = P;
     branch.loading = hd > 0 ? (2 * lift * kappa * hd) / ((1 + lift) * slope) : 0;
   };
-  /** Hold-up at the flood point, where the loading is 1; bisection in (hs, full). */
+  /** Logarithm of the loading at h for the gas load in `load`. */
+  const load = { dry: 0.5, c: 0.5 };
+  const lnLoading = (h: number): number => {
+    rising(h, load.dry, load.c);
+    return Math.log(branch.loading > LEAST_LOADING ? branch.loading : LEAST_LOADING);
+  };
+  /** Hold-up at the flood point, where the loading is 1; a full bed's when it is less there. */
   const floodHoldup = (dry: number, c: number): number => {
-    let low = hs;
+    load.dry = dry;
+    load.c = c;
     let high = fullHoldup;
-    for (let i = 0; i < 48; i++) {
-      const middle = 0.5 * (low + high);
-      rising(middle, dry, c);
-      if (branch.loading < 1) low = middle;
-      else high = middle;
+    let atHigh = lnLoading(high);
+    if (atHigh <= 0) return fullHoldup;
+    // Down by a third of the room above the static part at a time, to a bracket in which the curve is nearly straight.
+    for (;;) {
+      const low = hs + (2 / 3) * (high - hs);
+      const atLow = lnLoading(low);
+      if (atLow < 0) return bracketedRoot(lnLoading, low, high, atLow, atHigh, FLOOD_POINT).after;
+      high = low;
+      atHigh = atLow;
     }
-    return 0.5 * (low + high);
   };
   const capacity = (dry: number, c: number): number => {
     rising(floodHoldup(dry, c), dry, c);
