@@ -86,10 +86,10 @@ describe('a bed whose feed is cut', () => {
     expect(Math.abs(fine.before.L / CROSS_SECTION / U0 - 1)).toBeLessThan(1e-6); // the steady search's own bound
     expect(Math.abs(fine.before.held / (H0 * Z * CROSS_SECTION) - 1)).toBeLessThan(1e-5); // H0 has five digits
     times.forEach((x, i) => {
-      expect(Math.abs(fine.flow[i]! - u[i]!), `flow at ${x} t1`).toBeLessThan(MESH);
-      expect(Math.abs(fine.held[i]! - V[i]!), `held at ${x} t1`).toBeLessThan(MESH);
-      expect(Math.abs(2 * fine.flow[i]! - coarse.flow[i]! - u[i]!), `flow at ${x} t1`).toBeLessThan(EXTRAPOLATED);
-      expect(Math.abs(2 * fine.held[i]! - coarse.held[i]! - V[i]!), `held at ${x} t1`).toBeLessThan(EXTRAPOLATED);
+      expect(Math.abs(fine.flow[i]! - u[i]!)).toBeLessThan(MESH);
+      expect(Math.abs(fine.held[i]! - V[i]!)).toBeLessThan(MESH);
+      expect(Math.abs(2 * fine.flow[i]! - coarse.flow[i]! - u[i]!)).toBeLessThan(EXTRAPOLATED);
+      expect(Math.abs(2 * fine.held[i]! - coarse.held[i]! - V[i]!)).toBeLessThan(EXTRAPOLATED);
     });
   });
 
