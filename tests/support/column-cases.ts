@@ -3,6 +3,9 @@
  * constant, which has exact solutions. Figures are demo data unless a source is named.
  */
 import type { Bed, Case, ColumnSpec, LiquidSupply, Packing, Solute, Solvent } from '../../sim/case/case.ts';
+import { readCase } from '../../sim/case/read.ts';
+import { GAS_CONSTANT } from '../../sim/properties/constants.ts';
+import { CARRIERS } from '../../sim/properties/library/carriers.ts';
 import { WATER_MOLAR_MASS } from '../../sim/properties/library/solvents.ts';
 
 const constant = (value: number) => ({ kind: 'constant', value }) as const;
@@ -315,4 +318,81 @@ export function linearSlope(plant: Case): number {
   const equilibrium = plant.solutes[0]?.equilibrium;
   if (equilibrium?.model !== 'constant-ratio') throw new Error('not a linear bed');
   return equilibrium.m;
+}
+
+/** Gas and liquid of a column in another atmosphere, as a case file would state them. */
+export interface Atmosphere {
+  readonly solvent: 'water' | 'heavy-oil';
+  readonly carrier: 'air' | 'nitrogen' | 'carbon-dioxide' | 'steam';
+  readonly solutes: readonly unknown[];
+  /** Pa */ readonly pressure: number;
+  /** K */ readonly gasTemperature: number;
+  readonly liquidTemperature: number;
+  /** Mole fractions by solute. */
+  readonly gas: Readonly<Record<string, number>>;
+  readonly liquid?: Readonly<Record<string, number>>;
+  /** Gas load u_G rho_G^(1/2), Pa^(1/2), and liquid velocity, m/s. */
+  readonly load: number;
+  readonly uL: number;
+  readonly humidity?: number;
+  readonly height?: number;
+  /** Nothing but dilute transfer: isothermal, no evaporation. */
+  readonly still?: boolean;
+}
+
+/** Reads a case of the given atmosphere: the ring packing, 0.8 m, forced gas, once-through liquid, no control. */
+export function atmosphere(given: Atmosphere): Case {
+  const { pressure: p, gasTemperature: T, height = 5, still = false } = given;
+  const diameter = 0.8;
+  const A = 0.25 * Math.PI * diameter ** 2;
+  const M = CARRIERS[given.carrier]!.molarMass.value;
+  const rate = given.load * A * Math.sqrt(p / (GAS_CONSTANT * T * M));
+  const fractions = (x: Readonly<Record<string, number>>) =>
+    Object.fromEntries(Object.entries(x).map(([id, value]) => [id, `${value} mol/mol`]));
+  const text = {
+    formatVersion: 1,
+    invented: true,
+    title: 'column in another atmosphere',
+    shows: 'that the same equations hold there',
+    solvent: given.solvent,
+    carrier: given.carrier,
+    solutes: given.solutes,
+    column: {
+      diameter: `${diameter} m`,
+      topPressure: `${p} Pa(a)`,
+      beds: [{ packing: 'PR-MET-35', height: `${height} m`, segments: 20 }],
+      isothermal: still,
+      evaporation: !still && given.solvent === 'water',
+    },
+    gas: {
+      feed: {
+        rate: `${rate} mol/s`,
+        temperature: `${T} K`,
+        humidity: `${100 * (given.humidity ?? 0)} %`,
+        composition: fractions(given.gas),
+      },
+      source: { kind: 'forced', lag: '3 s' },
+      inletValve: { tag: 'HV-1' },
+    },
+    liquid: {
+      mode: 'once-through',
+      feed: {
+        rate: `${given.uL * A} m3/s`,
+        temperature: `${given.liquidTemperature} K`,
+        composition: fractions(given.liquid ?? {}),
+      },
+      pumps: { duty: 'P-1' },
+      valve: { tag: 'FV-1' },
+      distributorVolume: '20 L',
+      sump: {
+        area: '1 m2',
+        normalLevel: '0.6 m',
+        overflowLevel: '1 m',
+        drain: { tag: 'LV-1', capacity: `${2 * given.uL * A} m3/s` },
+      },
+    },
+  };
+  const result = readCase(JSON.stringify(text));
+  if (!result.ok) throw new Error(JSON.stringify(result.issues));
+  return result.value;
 }
