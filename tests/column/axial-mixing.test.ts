@@ -23,8 +23,8 @@ describe('gas with axial mixing over liquid without end', () => {
     const at = (segments: number): number =>
       gasOut({ NOG, A: 1e6, segments, peclet: { gas: Pe, liquid: undefined } }) / exact - 1;
     const [coarse, fine] = [at(40), at(80)];
-    expect(Math.abs(fine)).toBeLessThan(0.005); // the project's bar for the steady outlet
-    expect(Math.abs(fine)).toBeLessThan(Math.abs(coarse) / 1.7); // and falling with the mesh
+    expect(Math.abs(coarse)).toBeLessThan(0.005); // the project's bar for the steady outlet; 0.33 % measured
+    expect(Math.abs(fine)).toBeLessThan(Math.abs(coarse) / 3); // second order
   });
 });
 
@@ -40,8 +40,8 @@ describe('both phases with axial mixing', () => {
   ])('NOG $NOG, A $A, Pe $gas and $liquid', ({ NOG, A, gas, liquid, y }) => {
     const at = (segments: number): number => gasOut({ NOG, A, segments, peclet: { gas, liquid } }) / y - 1;
     const [coarse, fine] = [at(40), at(80)];
-    expect(Math.abs(coarse)).toBeLessThan(0.02);
-    expect(Math.abs(fine)).toBeLessThan(Math.abs(coarse) / 1.7);
+    expect(Math.abs(coarse)).toBeLessThan(0.006); // 0.54 % measured at NOG 8, Pe 40 and 8, else below 0.2 %
+    expect(Math.abs(fine)).toBeLessThan(Math.abs(coarse) / 3); // second order
   });
 });
 
