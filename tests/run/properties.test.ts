@@ -134,9 +134,9 @@ test(
         const word = outcome.kind === 'failed' ? `failed: ${outcome.failure.kind}` : outcome.kind;
         outcomes.set(word, (outcomes.get(word) ?? 0) + 1);
         const where = outcome.kind === 'failed' ? outcome.failure.where : 'the end';
-      expect(['completed', 'failed']).toContain(outcome.kind);
-      expect(where.length).toBeGreaterThan(3); // a failure says where
-      expect(faultsOf(run)).toEqual([]);
+        expect(['completed', 'failed']).toContain(outcome.kind);
+        expect(where.length).toBeGreaterThan(3); // a failure says where
+        expect(faultsOf(run)).toEqual([]);
       }),
       { seed: 20_261, numRuns: 40, endOnFailure: true },
     );
