@@ -1,6 +1,7 @@
-// Builds (command line, benchmark) and the test runner. Everything runs in Node; the output goes to dist/.
+// Builds (command line, benchmark, the page) and the test runner. The output goes to dist/.
 import { existsSync } from 'node:fs';
-import { defineConfig } from 'vitest/config';
+import { resolve } from 'node:path';
+import { defineConfig, type ViteUserConfig } from 'vitest/config';
 import type { Reporter, TestModule } from 'vitest/node';
 
 const root = import.meta.dirname;
@@ -26,7 +27,24 @@ const closingLine: Reporter = {
   },
 };
 
-export default defineConfig(({ mode }) => ({
+/** The page: its own root, chunks by use, and no module of the simulator kept for its side effects (it has none). */
+const page: ViteUserConfig = {
+  root: resolve(root, 'ui'),
+  base: './',
+  server: { fs: { allow: [root] } },
+  worker: { format: 'es' },
+  build: {
+    target: 'es2022',
+    outDir: resolve(root, 'dist/ui'),
+    emptyOutDir: true,
+    modulePreload: { polyfill: false },
+    // One chunk is plotly; its size is known.
+    chunkSizeWarningLimit: 6000,
+    rolldownOptions: { treeshake: { moduleSideEffects: (id: string) => !id.includes('/sim/') } },
+  },
+};
+
+const node = (mode: string): ViteUserConfig => ({
   root,
   build: {
     ssr: true,
@@ -46,4 +64,6 @@ export default defineConfig(({ mode }) => ({
     reporters: ['default', closingLine],
     coverage: { include: ['sim/**/*.ts', 'ui/**/*.ts'], reportsDirectory: 'coverage' },
   },
-}));
+});
+
+export default defineConfig(({ mode }) => (mode === 'ui' ? page : node(mode)));

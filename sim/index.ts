@@ -5,10 +5,14 @@ export type { SimFault } from './errors.ts';
 
 export { formatNumber, formatQuantity, formatTime, parseQuantity } from './units.ts';
 export { KINDS, unitsOf } from './units.ts';
-export type { Kind, KindEntry, ParsedQuantity, QuantityIssue, UnitEntry } from './units.ts';
+export type { KilogramPerMole, Kind, KindEntry, ParsedQuantity, QuantityIssue, UnitEntry } from './units.ts';
 
 export { LONGEST_TEXT, readCase } from './case/read.ts';
 export type { ReadOptions, ReadResult } from './case/read.ts';
+export { inUnit } from './case/measured.ts';
+export type { MeasuredScale, StrengthBasis } from './case/measured.ts';
+export { basisOf } from './case/resolve/strengths.ts';
+export type { Substances } from './case/resolve/strengths.ts';
 export { issueSentence } from './case/issues.ts';
 export type { Issue, IssueKind } from './case/issues.ts';
 export type * from './case/case.ts';

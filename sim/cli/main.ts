@@ -3,6 +3,7 @@ import { Command, CommanderError } from 'commander';
 
 import { VERSION } from '../index.ts';
 import { checkCommand } from './commands/check.ts';
+import { openCommand } from './commands/open.ts';
 import { runCommand } from './commands/run.ts';
 import { steadyCommand } from './commands/steady.ts';
 import { BadInput, EXIT } from './exit.ts';
@@ -10,6 +11,7 @@ import { addOptions, joinPairs, type Options } from './options.ts';
 import { say, sayIssues } from './talk.ts';
 
 const EXAMPLES = {
+  open: ['bedwave open', 'bedwave open my-case.json --port 8080', 'bedwave open --no-browser'],
   check: ['bedwave check cases/acetone-absorber.json'],
   steady: ['bedwave steady cases/acetone-absorber.json', 'bedwave steady my-case.json --units us --json steady.json'],
   run: [
@@ -66,6 +68,12 @@ function program(finish: (code: number) => void): Command {
     .addHelpText('after', examplesText(EXAMPLES.steady));
   addOptions(steady, ['json', 'units', 'segments']);
   steady.action((path: string, options: Options) => finish(steadyCommand(path, options)));
+  const open = root
+    .command('open [case]')
+    .description('show the page in a browser: a case, its upsets, what would help')
+    .addHelpText('after', examplesText(EXAMPLES.open));
+  addOptions(open, ['port', 'noBrowser']);
+  open.action((path: string | undefined, options: Options) => openCommand(path, options));
   root
     .command('check <case>')
     .description('read a case, say everything that is wrong with it, and whether its plant can run')

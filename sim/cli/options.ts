@@ -23,6 +23,8 @@ export interface Options {
   readonly seed?: number;
   readonly hold?: readonly string[];
   readonly units: UnitSystem;
+  readonly port?: number;
+  readonly browser?: boolean;
 }
 
 /** One line of the table. */
@@ -38,6 +40,7 @@ interface OptionEntry {
 /** Smallest and largest: as a case allows them. */
 const SEGMENTS = [2, 400] as const;
 const TOLERANCE = [1e-10, 1e-2] as const;
+const PORTS = [0, 65_535] as const;
 const LARGEST_SEED = 2 ** 31 - 1;
 /** Between the two values of `--save`, which commander hands over as one. */
 const JOINT = '\u0000';
@@ -67,6 +70,8 @@ const OPTIONS = {
     help: 'exit with 1 if this limit is not kept (repeatable; "all")',
     read: (t, before) => [...((before as string[] | undefined) ?? []), t],
   },
+  port: { flags: '--port <n>', help: 'port to serve at', read: (t) => whole('--port', t, ...PORTS) },
+  noBrowser: { flags: '--no-browser', help: 'print the address and start no browser' },
   units: {
     flags: '--units <system>',
     help: 'units of the printed answer: as the case states limits and instruments, SI elsewhere; or one system',
