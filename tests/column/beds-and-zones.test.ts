@@ -6,7 +6,7 @@ import { settled } from '../support/column-runs.ts';
 
 // What a column is cut into must not show: two beds for one, two equal zones for one. Unequal zones cost performance.
 
-const one = bare(withBeds(absorber, { height: 5, segments: 40 }));
+const one = bare(withBeds(absorber, { height: 5, segments: 20 }));
 
 /** The bed cut in two, with the liquid gathered between. */
 function halved(plant: Case): Case {
@@ -31,7 +31,7 @@ describe('two beds with a stirred redistributor between', () => {
   it('are one bed of both heights, in outlet strength, temperature, flow and pressure drop', () => {
     const whole = settled(one).outlet;
     const cut = settled(halved(one)).outlet;
-    // Each half closes with its own end faces: 4e-5 of the outlet measured, 1e-5 of the drop.
+    // Each half closes with its own end faces: 4e-5 of the outlet measured at 40 segments, 1e-5 of the drop.
     expect(Math.abs(cut.y[0]! / whole.y[0]! - 1)).toBeLessThan(2e-4);
     expect(Math.abs(cut.c[0]! / whole.c[0]! - 1)).toBeLessThan(1e-5);
     expect(Math.abs(cut.TG - whole.TG)).toBeLessThan(1e-3);
@@ -59,7 +59,7 @@ describe('two zones', () => {
   });
 
   it('the more unequal, the more solute leaves', () => {
-    const left = [0.5, 0.55, 0.6, 0.65, 0.7].map((liquidShare) =>
+    const left = [0.5, 0.55, 0.6, 0.65].map((liquidShare) =>
       mixedOutlet(settled(withColumn(one, { distribution: { areaShare: 0.5, liquidShare } })).column),
     );
     for (let i = 1; i < left.length; i++) expect(left[i]!).toBeGreaterThan(left[i - 1]!);

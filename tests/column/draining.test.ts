@@ -13,10 +13,10 @@ import {
 } from '../support/column-cases.ts';
 import { evenly, filled, march, outletAt, steadyOf } from '../support/column-runs.ts';
 
-// Liquid in a bed as a kinematic wave, dh/dt + d(k h^n)/dz = 0, solved by the method of characteristics (derivable;
-// G. B. Whitham, Linear and Nonlinear Waves, 1974, chapter 2): after
-// the feed stops, the outflow stays u0 until t1 = Z h0/(n u0) and then falls as u/u0 = (t1/t)^(n/(n - 1)); what is left,
-// V/V0 = 1 - t/(n t1) up to t1 and (n - 1)/n (t1/t)^(1/(n - 1)) after it. A front into a dry bed arrives at Z h0/u0.
+// Liquid in a bed as a kinematic wave, dh/dt + d(k h^n)/dz = 0, by the method of characteristics (derivable
+// [Whitham1974, chapter 2]): after the feed stops, the outflow stays u0 until t1 = Z h0/(n u0) and then falls as
+// u/u0 = (t1/t)^(n/(n - 1)); what is left, V/V0 = 1 - t/(n t1) up to t1 and (n - 1)/n (t1/t)^(1/(n - 1)) after it.
+// A front into a dry bed arrives at Z h0/u0.
 
 const Z = 3;
 const U0 = 0.005;

@@ -10,9 +10,10 @@ const EXACT = 1e-6;
 
 describe('absorption', () => {
   const NOGs = Array.from({ length: 12 }, (_, i) => i + 1);
+  /** All of them at 4, 8 and 12 units, every second one, in turn, at the others. */
   const factors = [0.5, 0.7, 1, 1.3, 2, 3];
   it.each(NOGs)('with %d transfer units leaves what Colburn gives, for absorption factors 0.5 to 3', (NOG) => {
-    for (const A of factors) {
+    for (const A of factors.filter((_, i) => NOG % 4 === 0 || i % 2 === NOG % 2)) {
       const { outlet } = settled(linearBed({ NOG, A }));
       expect(Math.abs(outlet.y[0]! / TRACE / gasLeft(NOG, A) - 1)).toBeLessThan(EXACT);
     }
