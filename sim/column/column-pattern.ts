@@ -184,6 +184,7 @@ export function createColumnPattern(plant: Case, layout: Layout, passThrough: bo
       builder.add(row, size + chain.firstFlow + c + 1);
     }
     for (const column of pressures(chain.bed)) builder.add(row, column);
+    for (let b = 0; b <= chain.bed; b++) builder.add(row, size + layout.firstDrop + b);
   }
   const reads = outerReads(plant, layout);
   const leaves = leafStates(plant, layout);

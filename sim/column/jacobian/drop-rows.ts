@@ -1,6 +1,13 @@
-/** Rows of the auxiliary pressure drops: 0 = sum over the cells of a bed's zones, by area, less the drop. */
+/**
+ * Rows of the auxiliary pressure drops: 0 = sum over the cells of a bed's zones, by area, less the drop. The drop is that
+ * of the flows before the gas is taken off that a rising pressure keeps back (the right-hand side needs the drop to know
+ * that gas), while the auxiliary flows are those after: so what the cells below keep back is added again. Left in, it
+ * makes a drop that answers itself; where the drop is a tenth of the pressure, steps shrink to milliseconds. The gas that
+ * liquid displaces, and what the beds below keep back, are left as they are.
+ */
 import { entryIndex, type SparsePattern } from '../../numerics/sparse-pattern.ts';
 import type { Chain } from '../chain.ts';
+import { PRESSURE_LAG } from '../plant.ts';
 import { grid } from './positions.ts';
 import type { Shape } from './shape.ts';
 
@@ -32,8 +39,27 @@ export function createDropRow(
   );
   /** Top pressure, then the drops of beds 0..bed. */
   const pressures = grid(pattern, [row], [layout.topPressure, ...layout.pressureDrop.slice(0, bed + 1)]);
+  /** Auxiliary drops of beds 0..bed. */
+  const drops = grid(
+    pattern,
+    [row],
+    Array.from({ length: bed + 1 }, (_, b) => size + layout.firstDrop + b),
+  );
+  const q = chain.work.primitives;
   return (values) => {
     if (zone === 0) values[own] -= 1;
+    let kept = 0; // by the cells below, mol/s per Pa of what the pressures are short of their targets
+    let keptByShare = 0;
+    for (let c = cells - 1; c >= 0; c--) {
+      const byFlow = share * local[(c * M + index.pressureDrop) * columns + flowColumn];
+      for (let j = 0; j <= bed; j++) values[pressures[j]] -= byFlow * kept;
+      values[pressures[bed + 1]] -= byFlow * keptByShare;
+      for (let b = 0; b < bed; b++) values[drops[b]] += byFlow * kept;
+      values[drops[bed]] += byFlow * keptByShare;
+      const here = q[c * index.size + index.gasMoles] / (chain.pressure(c) * PRESSURE_LAG);
+      kept += here;
+      keptByShare += (here * (c + 0.5)) / cells;
+    }
     for (let c = 0; c < cells; c++) {
       const from = (c * M + index.pressureDrop) * columns;
       const b = states[c];
