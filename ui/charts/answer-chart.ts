@@ -2,6 +2,7 @@
 import type { Data, Layout } from 'plotly.js-dist-min';
 
 import { clock, clockMarks } from '../format/clock.ts';
+import { formatTime } from '../format/numbers.ts';
 import { displayOf } from '../format/units.ts';
 import type { Units } from '../store/work.ts';
 import type { LimitLane, RunPacket } from '../worker/packet.ts';
@@ -57,7 +58,7 @@ export function answerChart({
   const show = displayOf(first, units);
   const data: Data[] = [];
   const shapes: NonNullable<Layout['shapes']> = [];
-  const annotations: NonNullable<Layout['annotations']> = [];
+  const labels: { level: number; text: string }[] = [];
   const levels: number[] = [];
   const direct = pointsOf(packet.time, first.value, axis.from, axis.to, (v) => show.convert(v));
   const averaged = (lane: LimitLane, run: RunPacket, value: Float64Array) =>
@@ -80,17 +81,8 @@ export function answerChart({
       y1: level,
       line: { color: palette.bad, width: 1.2, dash },
     });
-    const what = lane.averaging === undefined ? 'limit' : `limit of the ${clock(lane.averaging.window)} average`;
-    annotations.push({
-      xref: 'paper',
-      x: 1,
-      xanchor: 'right',
-      y: isLog ? Math.log10(level) : level,
-      yanchor: 'bottom',
-      showarrow: false,
-      text: plainText(`${what} ${show.text(lane.limit, 3)}`),
-      font: { color: palette.bad, size: 11 },
-    });
+    const what = lane.averaging === undefined ? 'limit' : `limit of the ${formatTime(lane.averaging.window)} average`;
+    labels.push({ level, text: `${what} ${show.text(lane.limit, 3)}` });
   }
   const curves: ArrayLike<number>[] = [];
   for (const run of [...runs].reverse()) {
@@ -107,7 +99,7 @@ export function answerChart({
     }
     data.push(lineTrace(points, { color, width: run === main ? 2 : 1.7 }));
   }
-  const span = extent(levels, ...curves) ?? [0, 1];
+  const range = rangeAround(extent(levels, ...curves) ?? [0, 1], isLog);
   const layout = baseLayout(axis, palette, height, clockMarks(axis.from, axis.to, axis.upset, mostMarks), true);
   return {
     title: `${first.label}, ${show.unit}${first.basis === undefined ? '' : ` ${first.basis}`}`,
@@ -116,16 +108,49 @@ export function answerChart({
     layout: {
       ...layout,
       shapes,
-      annotations,
+      annotations: limitLabels(labels, range, isLog, height, palette),
       yaxis: {
         ...layout.yaxis,
         type: isLog ? 'log' : 'linear',
-        range: rangeAround(span, isLog),
+        range,
         ...(isLog ? { dtick: 1 } : {}),
       },
     },
     table: () => tableOf(runs, first, rolling, units, axis),
   };
+}
+
+/** Height of a label, px. */
+const LABEL = 13;
+
+/** What each limit is, at the right end of its line; one that would touch the one below it stands higher. */
+function limitLabels(
+  labels: readonly { readonly level: number; readonly text: string }[],
+  range: readonly [number, number],
+  isLog: boolean,
+  height: number,
+  palette: Palette,
+): NonNullable<Layout['annotations']> {
+  const at = (level: number): number => (isLog ? Math.log10(level) : level);
+  const px = (level: number): number => ((at(level) - range[0]) / (range[1] - range[0])) * (height - 26);
+  let free = -Infinity;
+  return [...labels]
+    .sort((a, b) => a.level - b.level)
+    .map(({ level, text }) => {
+      const up = Math.max(0, free - px(level));
+      free = px(level) + up + LABEL;
+      return {
+        xref: 'paper',
+        x: 1,
+        xanchor: 'right',
+        y: at(level),
+        yanchor: 'bottom',
+        yshift: up - 2,
+        showarrow: false,
+        text: plainText(text),
+        font: { color: palette.bad, size: 11 },
+      };
+    });
 }
 
 function laneLike(packet: RunPacket, like: LimitLane): LimitLane | undefined {

@@ -10,6 +10,7 @@ export interface ChartTable {
 /** One chart. */
 export interface ChartSpec {
   readonly title: string;
+  /** In place of the title on the screen, where a choice beside it says the rest. */ readonly heading?: string;
   /** What it shows, in a sentence. */ readonly summary: string;
   readonly data: readonly Data[];
   readonly layout: Partial<Layout>;

@@ -10,6 +10,9 @@ import { baseLayout, type ChartSpec, type Palette, type TimeAxis } from './chart
 import { plainText } from './plot.ts';
 import { extent, lineTrace, markTrace, pointsOf, rangeAround } from './traces.ts';
 
+/** Least part of an instrument's range that a lane shows: noise and rounding stay small. */
+const LEAST_SPAN = 0.04;
+
 export interface LaneChartParts {
   readonly tag: string;
   readonly runs: readonly ComparedRun[];
@@ -52,7 +55,7 @@ export function laneChart({
     lineTrace(shown, { color: palette.ink, width: 1.7 }),
   );
   const [low, high] = extent(truth.y, shown.y, ...curves) ?? [0, 1];
-  const { near, shapes, annotations } = linesOf(lane.lines, convert, low, high, palette, (v) => show.text(v, 3));
+  const { near, shapes, annotations } = linesOf(lane.lines, convert, [low, high], palette, (v) => show.text(v, 3));
   for (const line of lane.lines) {
     const level = convert(line.value);
     const color = line.role === 'alarm' ? palette.shown : palette.bad;
@@ -63,7 +66,11 @@ export function laneChart({
     );
   }
   const layout = baseLayout(axis, palette, height, clockMarks(axis.from, axis.to, axis.upset, mostMarks), false);
-  const range = rangeAround(extent(near, [low, high]) ?? [0, 1]);
+  const whole =
+    lane.range === undefined
+      ? Math.max(Math.abs(low), Math.abs(high))
+      : convert(lane.range[1]) - convert(lane.range[0]);
+  const range = rangeAround(extent(near, [low, high]) ?? [0, 1], false, LEAST_SPAN * whole);
   return {
     title: `${tag} ${lane.label}, ${show.unit}`,
     summary: summaryOf(lane, axis, (v) => show.text(v, 3)),
@@ -88,8 +95,7 @@ function laneOf(run: ComparedRun | undefined, tag: string): InstrumentLane | und
 function linesOf(
   lines: readonly SetpointLine[],
   convert: (v: number) => number,
-  low: number,
-  high: number,
+  [low, high]: readonly [number, number],
   palette: Palette,
   text: (v: number) => string,
 ): { near: number[]; shapes: NonNullable<Layout['shapes']>; annotations: NonNullable<Layout['annotations']> } {
@@ -100,6 +106,11 @@ function linesOf(
       ({ line, level }) =>
         line.acts.length > 0 || line.shownCrossings.length > 0 || (level > low - reach && level < high + reach),
     );
+  const span = extent(
+    drawn.map(({ level }) => level),
+    [low, high],
+  ) ?? [low, high];
+  const middle = 0.5 * (span[0] + span[1]);
   return {
     near: drawn.map(({ level }) => level),
     shapes: drawn.map(({ line, level }) => ({
@@ -121,8 +132,9 @@ function linesOf(
       x: 1,
       xanchor: 'right',
       y: level,
-      yanchor: line.side === 'above' ? 'bottom' : 'top',
-      yshift: line.side === 'above' ? -2 : 2,
+      // Away from the nearer edge of the lane.
+      yanchor: level > middle ? 'top' : 'bottom',
+      yshift: level > middle ? 2 : -2,
       showarrow: false,
       text: plainText(`${line.tag} ${text(line.value)}${line.inService ? '' : ' (not in service)'}`),
       font: { size: 10, color: line.role === 'alarm' ? palette.shown : palette.bad },

@@ -1,5 +1,5 @@
 /** The bed map: depth against time, colour for one quantity of each segment. */
-import { clock, clockMarks } from '../format/clock.ts';
+import { clockMarks } from '../format/clock.ts';
 import { displayOf, type Display } from '../format/units.ts';
 import type { Units } from '../store/work.ts';
 import type { BedMap, MapQuantity, RunPacket } from '../worker/packet.ts';
@@ -102,6 +102,7 @@ export function mapChart({ packet, choice, axis, units, palette, height, mostMar
   const layout = baseLayout(axis, palette, height, clockMarks(axis.from, axis.to, axis.upset, mostMarks), false);
   return {
     title: `${choice.label} along the bed`,
+    heading: 'Bed map',
     summary: `Depth against time; ${choice.label} from ${formatNumber(scale.low, 3)} to ${formatNumber(scale.high, 3)} ${choice.display.unit}${choice.isLog ? ', logarithmic scale' : ''}.`,
     data: [
       {
@@ -168,9 +169,4 @@ export function fieldAt({ time, cells }: BedMap, field: Float64Array, cell: numb
   const t1 = time[k + 1] ?? t0;
   const b = field[(k + 1) * cells + cell] ?? a;
   return t1 > t0 ? a + Math.min(Math.max((t - t0) / (t1 - t0), 0), 1) * (b - a) : a;
-}
-
-/** Words for a moment of a map. */
-export function mapMoment(time: number, upset: number): string {
-  return `the bed at ${clock(time - upset, true)}`;
 }

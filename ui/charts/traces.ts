@@ -73,14 +73,17 @@ export function extent(...lists: readonly ArrayLike<number>[]): [number, number]
   return low <= high ? [low, high] : undefined;
 }
 
-/** A range with room around an extent; on a logarithmic scale in decades, as plotly takes it. */
-export function rangeAround([low, high]: [number, number], isLog = false): [number, number] {
+/** A range with room around an extent, at least `least` wide; on a logarithmic scale in decades, as plotly takes it. */
+export function rangeAround([low, high]: [number, number], isLog = false, least = 0): [number, number] {
   if (isLog) {
     const top = Math.log10(Math.max(high, 1e-12));
     const bottom = Math.log10(Math.max(low, high * 1e-6, 1e-12));
     const room = 0.06 * Math.max(top - bottom, 0.3);
     return [bottom - room, top + room];
   }
+  const middle = 0.5 * (low + high);
+  const wide = Math.max(high - low, least);
+  if (wide > high - low) [low, high] = [middle - wide / 2, middle + wide / 2];
   const span = high - low;
   const room = span > 0 ? 0.08 * span : Math.max(0.05 * Math.abs(high), 1e-9);
   return [low >= 0 && low - room < 0 ? Math.min(0, low) : low - room, high + room];

@@ -1,2 +1,2 @@
 /** Numbers for people, as the command line writes them. */
-export { formatNumber, formatTime } from '../../sim/index.ts';
+export { formatNumber, formatTime, massText } from '../../sim/index.ts';

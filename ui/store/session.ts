@@ -87,6 +87,7 @@ export class Session {
   #steadyText: string | undefined;
   #studies: SessionState['studies'] = {};
   #studiedKey = '';
+  /** Scenario whose worst moment has been gone to. */ #lookedAt = '';
   #notices: readonly Notice[] = [];
   #nextNotice = 1;
   #isReading = false;
@@ -210,6 +211,7 @@ export class Session {
     }
     this.#history.push({ ...workOn(name, clean, files), units: this.work.units });
     this.setView({ window: undefined });
+    this.#lookedAt = '';
     this.playhead.seek(0);
     this.#changed();
     return true;
@@ -228,6 +230,7 @@ export class Session {
 
   chooseScenario(id: string): void {
     this.#view = { ...this.#view, window: undefined };
+    this.playhead.seek(0);
     this.edit({ scenario: id, branches: [] });
   }
 
@@ -441,9 +444,19 @@ export class Session {
 
   #afterRun(): void {
     const main = this.#slots.state(MAIN);
+    this.#lookAtWorst(main.packet);
     if (!this.#isHalted && !main.isStale && main.packet !== undefined && this.#read.issues.length === 0)
       this.#wantBranches();
     this.#tell();
+  }
+
+  /** The first look at a scenario goes to the worst moment of what is limited. */
+  #lookAtWorst(packet: RunPacket | undefined): void {
+    if (packet === undefined || packet.scenario !== this.work.scenario || this.#lookedAt === packet.scenario) return;
+    this.#lookedAt = packet.scenario;
+    const { answers, summary } = packet.document;
+    const worst = answers.limits.find((l) => l.id === summary.headline)?.peak.time;
+    if (this.playhead.time === 0) this.playhead.seek(worst ?? answers.firstUpset ?? 0);
   }
 
   #wantSteady(): void {

@@ -19,6 +19,13 @@ export const styles = css`
     overflow: hidden;
     text-overflow: ellipsis;
   }
+  @media (max-width: 720px) {
+    header {
+      flex-wrap: wrap;
+      gap: 0 8px;
+      padding-left: 8px;
+    }
+  }
   .space {
     flex: 1;
   }

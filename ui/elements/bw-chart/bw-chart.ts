@@ -93,7 +93,7 @@ export class BwChart extends LitElement {
     const { spec, height } = this;
     return html`
       <header>
-        <h3>${spec?.title}</h3>
+        <h3>${spec?.heading ?? spec?.title}</h3>
         <slot name="tools"></slot>
         <span class="space"></span>
         <slot name="readout"></slot>

@@ -5,6 +5,7 @@ import { valueAtTime } from '../../charts/decimate.ts';
 import { colorScale, fieldAt, type ColorScale, type MapChoice } from '../../charts/map-chart.ts';
 import { StoreController } from '../../controllers/store-controller.ts';
 import { clock } from '../../format/clock.ts';
+import { massText } from '../../format/numbers.ts';
 import { displayOf } from '../../format/units.ts';
 import type { Playhead } from '../../store/playhead.ts';
 import type { RunPacket, Units } from '../../store/shown.ts';
@@ -143,16 +144,16 @@ export class BwColumn extends LitElement {
       >
         <svg viewBox="0 0 ${WIDTH} ${HEIGHT}" aria-hidden="true">
           ${this.#frame(level, liquidOn, gasOn)}${svg`
-          <text x="132" y="12">${text(`gas-outlet.${first}`)}</text>
-          <text x="132" y="26" class="quiet">${text('gas-outlet-temperature')}</text>
+          <text x="146" y="12">${text(`gas-outlet.${first}`)}</text>
+          <text x="146" y="26" class="quiet">${text('gas-outlet-temperature')}</text>
           <text x="4" y="62">${text('liquid-flow')}</text>
           <text x="4" y="90" class="quiet">${text('liquid-inlet-temperature')}</text>
           <text x="172" y="186">${text('bed-dp')}</text>
           <text x="172" y="276">${text('gas-flow')}</text>
           <text x="172" y="304" class="quiet">${text(`gas-inlet.${first}`)}</text>
           <text x="4" y="330">${text('sump-level')}</text>
-          <text x="132" y="384">${text(`liquid-outlet.${first}`)}</text>
-          <text x="132" y="398" class="quiet">${text('liquid-outlet-temperature')}</text>`}
+          <text x="136" y="384">${text(`liquid-outlet.${first}`)}</text>
+          <text x="136" y="397" class="quiet">${text('liquid-outlet-temperature')}</text>`}
         </svg>
         <canvas
           width=${WIDTH * 2}
@@ -182,7 +183,7 @@ export class BwColumn extends LitElement {
         <dt>pump speed</dt>
         <dd>${text('pump-speed')}</dd>
         <dt>emitted</dt>
-        <dd>${text(`stack-flow.${first}`)}</dd>
+        <dd>${massText(3600 * read(`stack-flow.${first}`) * (plant.solutes[0]?.molarMass ?? 0), units.system)}/h</dd>
       </dl>
     `;
   }

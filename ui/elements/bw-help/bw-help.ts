@@ -25,7 +25,7 @@ const WORDS: readonly (readonly [string, string])[] = [
   ['bed map', 'depth of the packing against time, coloured by one quantity of each segment.'],
   [
     'lane',
-    'one instrument: dotted what is so, full what it shows (lag, dead time, range end). Dashed lines are alarms, full lines are trips; ○ the true value passes, ● the shown value passes, ▲ ▼ it annunciates or acts.',
+    'one instrument: dotted what is so, full what it shows (lag, dead time, range end). Dashed lines are alarms, full lines are trips. An open circle: the true value passes; a full one: the shown value passes; a triangle: it annunciates or acts.',
   ],
   ['upset, action', 'an upset starts trouble; an action answers it.'],
   ['branch', 'the same run with another action from a moment on.'],

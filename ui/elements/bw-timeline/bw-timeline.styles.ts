@@ -52,10 +52,6 @@ export const styles = css`
     left: 0;
     pointer-events: none;
   }
-  .sign {
-    font-size: 10px;
-    margin-right: 4px;
-  }
   .handle {
     position: absolute;
     top: 0;

@@ -3,6 +3,7 @@ import { html, LitElement, nothing, type TemplateResult } from 'lit';
 import { clock } from '../../format/clock.ts';
 import type { Block } from '../../store/timeline.ts';
 import { controls } from '../../styles/shared.ts';
+import { SIGN } from '../signs.ts';
 import { styles } from './bw-timeline.styles.ts';
 
 /** px */
@@ -146,7 +147,7 @@ export class BwTimeline extends LitElement {
         this.#onClick(index);
       }}
     >
-      <span class="text"><span class="sign" aria-hidden="true">${role === 'upset' ? '▼' : '●'}</span>${label}</span>
+      <span class="text">${role === 'upset' ? SIGN.upset : SIGN.action}${label}</span>
       ${
         block.canStretch && lasts !== undefined
           ? html`<span

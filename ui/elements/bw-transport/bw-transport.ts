@@ -28,6 +28,11 @@ export class BwTransport extends LitElement {
       .of {
         color: var(--ink-2);
       }
+      @media (max-width: 720px) {
+        .of {
+          display: none;
+        }
+      }
     `,
   ];
   static override properties = { playhead: { attribute: false }, upset: { type: Number }, grain: { type: Number } };

@@ -268,6 +268,19 @@ export const styles = css`
     .desk.is-long {
       position: static;
     }
+    .desk-side,
+    .zoom {
+      display: none;
+    }
+    .scenario {
+      width: 100%;
+    }
+    .controls > label {
+      flex-basis: 100%;
+    }
+    .controls {
+      gap: 4px 6px;
+    }
     .up > .menu {
       position: fixed;
       left: 8px;

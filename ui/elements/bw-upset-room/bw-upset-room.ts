@@ -19,6 +19,7 @@ import { blocksOf, moveEdit, stepId, stretchEdit, type Block, type StepText } fr
 import { MOST_BRANCHES } from '../../store/work.ts';
 import { controls, tables } from '../../styles/shared.ts';
 import { CLOSE, MINUS, PLUS } from '../icons.ts';
+import { EVENT_SIGN, SIGN } from '../signs.ts';
 import { readPalette } from '../palette.ts';
 import '../bw-branches/bw-branches.ts';
 import '../bw-chart/bw-chart.ts';
@@ -275,7 +276,8 @@ export class BwUpsetRoom extends LitElement {
       <div class="lanes-head">
         <h2>Instruments</h2>
         <span class="legend"
-          >dotted: true · full: shown · ○ true value passes · ● shown value passes · ▲▼ annunciates or acts</span
+          >dotted: true, full: shown; ${SIGN.truth}true value passes, ${SIGN.shown}shown value passes,
+          ${SIGN.alarm}annunciates or acts</span
         >
       </div>
       ${this.#lanes.map(([tag, spec]) => {
@@ -357,7 +359,7 @@ export class BwUpsetRoom extends LitElement {
                     ${clock(event.time - this.#upset, true)}
                   </button>
                 </td>
-                <td>${EVENT_SIGNS[event.kind] ?? '·'} ${event.text}</td>
+                <td>${EVENT_SIGN[event.kind]} ${event.text}</td>
               </tr>`,
           )}
         </tbody>
@@ -401,7 +403,7 @@ export class BwUpsetRoom extends LitElement {
           </select></label
         >
         <bw-transport .playhead=${playhead} .upset=${this.#upset} .grain=${this.#grain()}></bw-transport>
-        <span>
+        <span class="zoom">
           <button aria-label="Show less time" title="Show less time (+)" @click=${() => this.#zoom(0.5)}>
             ${PLUS}
           </button>
@@ -413,8 +415,8 @@ export class BwUpsetRoom extends LitElement {
       </div>
       <div class="desk-side">
         <span
-          >${blocks.length} ${blocks.length === 1 ? 'step' : 'steps'}: <b>▼</b> upset, <b>●</b> action. Drag a block to
-          move it, its right edge to stretch it; click for its fields.</span
+          >${blocks.length} ${blocks.length === 1 ? 'step' : 'steps'}: ${SIGN.upset}upset, ${SIGN.action}action. Drag a
+          block to move it, its right edge to stretch it; click for its fields.</span
         >
       </div>
       <div class="axis">
@@ -478,7 +480,7 @@ export class BwUpsetRoom extends LitElement {
             class="mark ${MARKED[e.kind] ?? ''}"
             style="left:${(100 * (e.time - from)) / (to - from)}%"
             title="${clock(e.time - this.#upset, true)} ${e.text}"
-            >${EVENT_SIGNS[e.kind]}</span
+            >${EVENT_SIGN[e.kind]}</span
           >`,
       )}
     </div>`;
@@ -756,20 +758,6 @@ export class BwUpsetRoom extends LitElement {
   };
 }
 
-/** Signs of events, so that colour is not needed to tell them apart. */
-const EVENT_SIGNS: Readonly<Record<string, string>> = {
-  upset: '▼',
-  action: '●',
-  alarm: '▲',
-  'alarm-cleared': '△',
-  interlock: '◆',
-  'limit-crossed': '✕',
-  'limit-kept-again': '✓',
-  flooding: '≋',
-  'flooding-over': '✓',
-  'carry-over': '≋',
-  'range-left': '!',
-};
 /** Events that stand on the axis; `bad` ones in the colour of trouble. */
 const MARKED: Readonly<Record<string, string>> = {
   alarm: '',
