@@ -23,8 +23,13 @@ export function checkPlant(plant: Case): Issue[] {
       : [issue('error', 'gas.source', 'a fan that gives the design rate', fan, 'raise its rated flow or pressure')];
   const run = createRun(plant, steadyScenario(plant));
   if (run.outcome.kind === 'failed') {
-    const { where } = run.outcome.failure;
-    return [...small, issue('error', 'column', 'a plant with a steady state', `none found; what moves most: ${where}`)];
+    const { failure } = run.outcome;
+    const hint = 'a scenario that begins dry shows where the plant goes';
+    const received = `none found; what moves most: ${failure.where}`;
+    const unsteady = issue('error', 'column', 'a plant with a steady state', received, hint);
+    // The search ended somewhere: a flooded bed there is the likely reason.
+    const flooded = failure.kind === 'no-steady-state' ? floodIssues(steadyAnswers(run)) : [];
+    return [...small, ...flooded, unsteady];
   }
   const answer = steadyAnswers(run);
   return [...small, ...loadIssues(answer), ...answer.beds.flatMap(bedIssues), ...limitIssues(plant, answer)];
@@ -35,13 +40,20 @@ function issue(severity: Issue['severity'], path: string, expected: string, rece
   return hint === undefined ? base : { ...base, hint };
 }
 
-function loadIssues({ floodApproach, profile }: SteadyAnswer): Issue[] {
-  const flooded = profile.beds.find((bed) => bed.rows.some((row) => row.loading >= FLOODED));
-  if (flooded !== undefined) {
-    const path = `column.beds[${flooded.bed - 1}]`;
-    const hint = 'a larger diameter, an opener packing, less gas or less liquid';
-    return [issue('error', path, 'a bed that does not flood at the design point', 'a flooded one', hint)];
-  }
+function floodIssues({ profile }: SteadyAnswer): Issue[] {
+  return profile.beds
+    .filter((bed) => bed.rows.some((row) => row.loading >= FLOODED))
+    .map(({ bed }) => {
+      const hint = 'a larger diameter, an opener packing, less gas or less liquid';
+      const path = `column.beds[${bed - 1}]`;
+      return issue('error', path, 'a bed that does not flood at the design point', 'a flooded one', hint);
+    });
+}
+
+function loadIssues(answer: SteadyAnswer): Issue[] {
+  const flooded = floodIssues(answer);
+  if (flooded.length > 0) return flooded;
+  const { floodApproach } = answer;
   if (floodApproach === null) return [];
   const share = quantityText(floodApproach, 'fraction', 'si');
   if (floodApproach > HIGH_LOAD) {
