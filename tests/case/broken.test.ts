@@ -38,6 +38,19 @@ describe('broken cases', () => {
     );
   });
 
+  test('a control loop with no time in it, a redistributor without liquid, a bed of two segments', () => {
+    const tree = acetone();
+    put(tree, 'instruments/FT-311/lag', '0 s');
+    put(tree, 'controllers/LIC-312/instrument', 'FT-311');
+    put(tree, 'controllers/LIC-312/setpoint', '2 L/s');
+    put(tree, 'controllers/LIC-312/gain', '0.1 1/(L/s)');
+    expect(faults(JSON.stringify(tree))).toEqual(['controllers.LIC-312.instrument: contradiction']);
+    expect(faults(changed('column/beds/0/redistributorVolume', '0 L'))).toEqual([
+      'column.beds[0].redistributorVolume: range',
+    ]);
+    expect(faults(changed('column/beds/0/segments', 2))).toEqual(['column.beds[0].segments: range']);
+  });
+
   test('JSON cut off in the middle tells line and column', () => {
     const text = caseText('acetone-absorber');
     const cut = text.slice(0, text.indexOf('"humidity"') + 14);

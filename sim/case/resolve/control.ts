@@ -224,6 +224,12 @@ export function readAlarm(
   };
 }
 
+/**
+ * Quantities that are states themselves. Any other follows from the flows that a controller's output decides, so a
+ * controller on it without a lag would be a loop with no time in it.
+ */
+const STATES: ReadonlySet<string> = new Set(['sump-level', 'sump-temperature', 'sump-strength', 'distributor-volume']);
+
 /** One controller, or undefined after noting why not. */
 export function readController(
   reading: Reading,
@@ -247,6 +253,10 @@ export function readController(
   }
   const scaled = instruments.get(given.instrument);
   if (scaled === undefined) return undefined;
+  if (!(scaled.instrument.lag > 0) && !STATES.has(scaled.instrument.measured.quantity)) {
+    const hint = `give ${given.instrument} a lag, such as "0.5 s"`;
+    reading.refuse('contradiction', join(path, 'instrument'), 'an instrument with a lag', given.instrument, hint);
+  }
   const setpoint = readSetpoint(reading, join(path, 'setpoint'), given.setpoint, scaled.scale);
   const gain = readGain(reading, join(path, 'gain'), given.gain, scaled.scale);
   if (setpoint === undefined || gain === undefined || reading.issues.length > before) return undefined;

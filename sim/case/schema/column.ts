@@ -45,8 +45,8 @@ const packing = v.union([text('a library packing', 'PR-MET-35'), group(packingEn
 const bed = group({
   packing,
   height: quantity('length', { above: 0, max: 100 }, 'packed height'),
-  segments: maybe(count(2, 400, 'segments of this bed')),
-  redistributorVolume: maybe(quantity('volume', { min: 0, max: 100 }, 'liquid held above this bed')),
+  segments: maybe(count(3, 400, 'segments of this bed')),
+  redistributorVolume: maybe(quantity('volume', { above: 0, max: 100 }, 'liquid held above this bed')),
 });
 
 const staticHoldup = maybe(
