@@ -19,7 +19,7 @@ export interface OuterReads {
 }
 
 /** Cells at a chain's end that its end face reads. */
-export const END_CELLS = 3;
+const END_CELLS = 3;
 
 export interface ColumnPattern {
   readonly pattern: SparsePattern;

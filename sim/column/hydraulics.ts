@@ -10,7 +10,7 @@ import { createBilletDrainage } from './billet-drainage.ts';
 import { powerLawDrainage, stichlmairDrainage, type HydraulicLaw, type HydraulicState } from './hydraulic-law.ts';
 
 /** What changes in a bed's hydraulics during a run. */
-export interface HydraulicConditions {
+interface HydraulicConditions {
   readonly fouling: number;
   readonly foaming: number;
 }

@@ -43,7 +43,7 @@ const OVERFLOW_TIME = 2;
 const STARVING_BAND = 0.2;
 
 /** Streams and flows of the present moment, read by reports and instruments. */
-export interface PlantFlows {
+interface PlantFlows {
   /** mol/s from the source, into the bed, diverted. */
   gasSource: number;
   gasToBed: number;

@@ -11,7 +11,7 @@ import { WATER_MOLAR_MASS } from '../../sim/properties/library/solvents.ts';
 const constant = (value: number) => ({ kind: 'constant', value }) as const;
 const library = (id: string) => ({ kind: 'library', id }) as const;
 
-export const waterSolvent: Solvent = {
+const waterSolvent: Solvent = {
   id: 'water',
   name: 'water',
   molarMass: WATER_MOLAR_MASS,
@@ -36,7 +36,7 @@ export const airCarrier: Case['carrier'] = {
 };
 
 /** Henry's constant of [Sander2023]; heat capacities and volumes demo data. */
-export const acetoneSolute: Solute = {
+const acetoneSolute: Solute = {
   id: 'acetone',
   name: 'acetone',
   molarMass: 0.05808,
@@ -52,7 +52,7 @@ export const acetoneSolute: Solute = {
 };
 
 /** Methanol after [Sander2023]'s predecessors: 2.0 mol/(m3 Pa), 5600 K. */
-export const methanolSolute: Solute = {
+const methanolSolute: Solute = {
   ...acetoneSolute,
   id: 'methanol',
   name: 'methanol',

@@ -9,7 +9,7 @@ import { grid } from './positions.ts';
 import type { Shape } from './shape.ts';
 
 /** Outer rows that read one chain, by what they read. */
-export type OuterReaders = Readonly<Record<keyof OuterReads, Int32Array>>;
+type OuterReaders = Readonly<Record<keyof OuterReads, Int32Array>>;
 
 /** One chain as outer rows see it. */
 export interface OuterRows {
