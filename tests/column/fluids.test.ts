@@ -7,8 +7,10 @@ import {
   LIQUID,
   LIQUID_SOLUTE,
   SOLUTE_COLUMNS,
+  SOLUTE_DIFFUSIVITY,
+  SOLUTE_FILM,
+  SOLUTE_PRESSURE,
 } from '../../sim/column/fluids.ts';
-import { SOLUTE_DIFFUSIVITY, SOLUTE_FILM, SOLUTE_PRESSURE } from '../../sim/column/fluids.ts';
 import { GAS_CONSTANT, STANDARD_GRAVITY } from '../../sim/properties/constants.ts';
 import { caseText, mustRead } from '../case/support.ts';
 

@@ -51,19 +51,6 @@ const acetoneSolute: Solute = {
   heatOfAbsorption: undefined,
 };
 
-/** Methanol after [Sander2023]'s predecessors: 2.0 mol/(m3 Pa), 5600 K. */
-const methanolSolute: Solute = {
-  ...acetoneSolute,
-  id: 'methanol',
-  name: 'methanol',
-  molarMass: 0.03204,
-  molarVolume: 4.0e-5,
-  liquidDiffusivity: { value: 1.6e-9, temperature: 298.15 },
-  boilingVolume: 37,
-  diffusionVolume: 31.25,
-  equilibrium: { model: 'henry', solubility: 2, temperatureFactor: 5600 },
-};
-
 /** 35 mm metal ring; geometry and Billet's constants [Billet1999], friction constants [Stichlmair1989], from memory. */
 export const metalRing35: Packing = {
   id: 'PR-MET-35',
