@@ -4,7 +4,6 @@
 import type { Default } from './reading.ts';
 
 const JUDGEMENT = 'engineering judgement, no source';
-const PRACTICE = 'common practice, no source';
 
 function judged<T>(value: T, source = JUDGEMENT): Default<T> {
   return { value, source, verified: 'judgement' };

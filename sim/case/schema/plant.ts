@@ -2,7 +2,7 @@
 
 import * as v from 'valibot';
 
-import { choice, group, maybe, quantity, tag, text, yesNo } from './primitives.ts';
+import { choice, group, maybe, quantity, tag, text } from './primitives.ts';
 import type { Range } from './primitives.ts';
 
 const POSITIVE: Range = { above: 0 };
