@@ -19,21 +19,27 @@ const autosave = new Autosave({ get: (key) => get(key), set: (key, value) => set
 const kept = await autosave.load();
 const fragment = location.hash;
 const shared = isShared(fragment) ? await unpackWork(fragment) : undefined;
-const named = fragment === '#open' ? await namedCase() : undefined;
-const work = named ?? shared ?? kept?.work ?? workOn(`${DEMO}.json`, await exampleText(DEMO));
+const taken = fragment === '#open' ? await namedCase() : shared;
+const before = kept?.work ?? taken ?? workOn(`${DEMO}.json`, await exampleText(DEMO));
 const session = new Session(
   { engine, studyEngine: new EngineClient(workerLine), autosave, now: () => performance.now() },
-  work,
+  before,
 );
-if (isShared(fragment) || named !== undefined) {
-  // The link is taken in; a reload is to show what was made of it since.
-  history.replaceState(null, '', location.pathname + location.search);
-  if (named === undefined && shared === undefined)
-    session.notify('problem', 'The link is damaged: it was cut or changed on its way.');
-}
 session.start(kept?.view);
+if (taken !== undefined && taken !== before && taken.text !== before.text) {
+  session.take(taken);
+  session.notify('plain', `${taken.name} was opened. Undo brings back ${before.name}, which was here before.`);
+}
+if (isShared(fragment) && shared === undefined) {
+  session.notify('problem', 'The link is damaged: it was cut or changed on its way.');
+}
 const app = document.querySelector('bw-app');
 if (app !== null) app.session = session;
+if (taken !== undefined || isShared(fragment)) {
+  // Once it is kept: a reload is to show what was made of it since, not the link again.
+  await autosave.settled();
+  history.replaceState(null, '', location.pathname + location.search);
+}
 
 /** The case that the command line was given. */
 async function namedCase(): Promise<Work | undefined> {

@@ -209,12 +209,17 @@ export class Session {
       void this.#refuse(name, clean);
       return false;
     }
-    this.#history.push({ ...workOn(name, clean, files), units: this.work.units });
-    this.setView({ window: undefined });
+    this.take({ ...workOn(name, clean, files), units: this.work.units });
+    return true;
+  }
+
+  /** Takes another work in place of this one, which undo brings back. */
+  take(work: Work): void {
+    this.#history.push(work);
+    this.#view = { ...this.#view, window: undefined };
     this.#lookedAt = '';
     this.playhead.seek(0);
     this.#changed();
-    return true;
   }
 
   async #refuse(name: string, text: string): Promise<void> {

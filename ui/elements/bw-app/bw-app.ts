@@ -8,6 +8,7 @@ import { css, html, LitElement, type TemplateResult } from 'lit';
 
 import { StoreController } from '../../controllers/store-controller.ts';
 import type { Session } from '../../store/session.ts';
+import { controls } from '../../styles/shared.ts';
 import { openFiles } from '../open-files.ts';
 import { saveText } from '../save-file.ts';
 import { ROOM_NAMES } from '../bw-bar/bw-bar.ts';
@@ -17,30 +18,25 @@ import '../bw-upset-room/bw-upset-room.ts';
 
 /** The whole page: bar, messages, the room that is open, the keys. */
 export class BwApp extends LitElement {
-  static override styles = css`
-    :host {
-      display: block;
-    }
-    .over {
-      outline: 3px dashed var(--accent);
-      outline-offset: -6px;
-    }
-    .start {
-      padding: 3rem 16px;
-      color: var(--ink-2);
-    }
-    .skip {
-      position: absolute;
-      left: -9999px;
-    }
-    .skip:focus {
-      left: 8px;
-      top: 8px;
-      z-index: 30;
-      background: var(--sheet);
-      padding: 4px 8px;
-    }
-  `;
+  static override styles = [
+    controls,
+    css`
+      :host {
+        display: block;
+      }
+      .over {
+        outline: 3px dashed var(--accent);
+        outline-offset: -6px;
+      }
+      .start {
+        padding: 3rem 16px;
+        color: var(--ink-2);
+      }
+      h1 {
+        margin: 0;
+      }
+    `,
+  ];
   static override properties = { session: { attribute: false }, isOver: { state: true } };
   declare session: Session | undefined;
   declare private isOver: boolean;
@@ -79,7 +75,10 @@ export class BwApp extends LitElement {
     if (session === undefined) return html`<main class="start">Starting…</main>`;
     const { notices } = session.state;
     return html`
-      <bw-bar .session=${session} @bw-help=${this.#onHelp}></bw-bar>
+      <header>
+        <h1 class="hidden-text">Bedwave: ${session.work.name}</h1>
+        <bw-bar .session=${session} @bw-help=${this.#onHelp}></bw-bar>
+      </header>
       <bw-notices
         .notices=${notices}
         @bw-dismiss=${(e: CustomEvent<{ id: number }>) => {
