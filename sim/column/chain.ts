@@ -7,7 +7,7 @@
  * carrier is lost; the linear systems know the first flow only (the difference is some 0.1 %).
  */
 import type { Case } from '../case/case.ts';
-import { readHermiteColumn, type HermiteTable } from '../numerics/hermite-table.ts';
+import { readHermiteColumn, readHermiteSlope, type HermiteTable } from '../numerics/hermite-table.ts';
 import type { Cell } from './cell.ts';
 import { inletFace, interiorFace, outletFace, type FaceValue } from './face-value.ts';
 import { DATUM_TEMPERATURE, type Fluids } from './fluids.ts';
@@ -316,13 +316,13 @@ export function createChain(parts: ChainParts): Chain {
     const v0 = q[p + index.liquidRow];
     let volumeRate = -dydt[at] * v0;
     for (let k = 1; k < components; k++) volumeRate -= dydt[at + k] * soluteVolume[k];
-    if (!isothermal) volumeRate -= y[at] * expansion(TL, v0) * liquidTemperatureRate(y, dydt, at, TL);
+    if (!isothermal) volumeRate -= y[at] * expansion(TL) * liquidTemperatureRate(y, dydt, at, TL);
     const pressureRate = u[ip.topPressureRate] + (u[ip.pressureDropRate] * (c + 0.5)) / N;
     return q[p + index.gasMoles] * (volumeRate / q[p + index.gasVolume] + pressureRate / pressure(c));
   };
 
   /** d(molar volume)/dT, m3/(mol K). */
-  const expansion = (T: number, v0: number): number => readHermiteColumn(parts.molarVolume, 0, T + 1) - v0;
+  const expansion = (T: number): number => readHermiteSlope(parts.molarVolume, 0, T);
   const liquidTemperatureRate = (y: Float64Array, dydt: Float64Array, at: number, TL: number): number => {
     let capacity = cell.packingHeat;
     let carried = 0;

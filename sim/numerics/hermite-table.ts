@@ -88,3 +88,16 @@ export function readHermiteColumn(table: HermiteTable, column: number, x: number
   const slope = c[at + 1] + edge * (2 * c[at + 2] + 3 * c[at + 3]);
   return c[at] + edge * (c[at + 1] + c[at + 2] + c[at + 3]) + slope * (u - edge);
 }
+
+/** Slope of one column at `x`: that of the cubics that are read, exactly. */
+export function readHermiteSlope(table: HermiteTable, column: number, x: number): number {
+  const c = table.coefficients;
+  let u = (x - table.lower) * table.inverseSpacing;
+  let k = Math.floor(u);
+  if (!(k >= 0)) k = 0;
+  if (k >= table.intervals) k = table.intervals - 1;
+  u -= k;
+  const within = u < 0 ? 0 : u > 1 ? 1 : u;
+  const at = 4 * (k * table.columns + column);
+  return table.inverseSpacing * (c[at + 1] + within * (2 * c[at + 2] + within * 3 * c[at + 3]));
+}
