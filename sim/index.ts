@@ -5,7 +5,7 @@ export type { SimFault } from './errors.ts';
 
 export { formatNumber, formatQuantity, formatTime, parseQuantity } from './units.ts';
 export { KINDS, unitsOf } from './units.ts';
-export type { KilogramPerMole, Kind, KindEntry, ParsedQuantity, QuantityIssue, UnitEntry } from './units.ts';
+export type { KilogramPerMole, Kind, KindEntry, ParsedQuantity, Quantity, QuantityIssue, UnitEntry } from './units.ts';
 
 export { LONGEST_TEXT, readCase } from './case/read.ts';
 export type { ReadOptions, ReadResult } from './case/read.ts';

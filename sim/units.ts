@@ -4,13 +4,16 @@
 declare const unit: unique symbol;
 
 /** A number that carries its unit for the checker and costs nothing at run time. */
-type Quantity<U extends string> = number & {
+export type Quantity<U extends string> = number & {
   /** Phantom; never present at run time. */
   readonly [unit]?: U;
 };
 
+/** Temperature. */
 export type Kelvin = Quantity<'K'>;
+/** Pressure. */
 export type Pascal = Quantity<'Pa'>;
+/** Molar mass. */
 export type KilogramPerMole = Quantity<'kg/mol'>;
 
 export type { Kind, KindEntry, UnitEntry } from './units/kinds.ts';
