@@ -73,7 +73,7 @@ export interface BedMap {
 }
 
 /** When a step of the scenario came. */
-export interface StepTime {
+interface StepTime {
   readonly id: string;
   readonly time: number;
 }
