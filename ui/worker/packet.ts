@@ -5,7 +5,7 @@
 import type { Case, QuantityKind, ResultDocument } from '../../sim/index.ts';
 
 /** The result document without what the packet holds as arrays. */
-export type RunDocument = Omit<ResultDocument, 'series' | 'profiles'>;
+type RunDocument = Omit<ResultDocument, 'series' | 'profiles'>;
 
 /** A quantity over time. */
 export interface Series {
