@@ -2,7 +2,6 @@
 import { get, set } from 'idb-keyval';
 
 import './elements/bw-app/bw-app.ts';
-import { loadPlotly } from './charts/plot.ts';
 import { Autosave } from './store/autosave.ts';
 import { DEMO, exampleText } from './store/examples.ts';
 import { Session } from './store/session.ts';
@@ -13,7 +12,6 @@ import { workerLine } from './worker/worker-line.ts';
 
 const engine = new EngineClient(workerLine);
 engine.begin();
-void loadPlotly();
 const autosave = new Autosave({ get: (key) => get(key), set: (key, value) => set(key, value) });
 
 const kept = await autosave.load();

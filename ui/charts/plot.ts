@@ -4,8 +4,12 @@ import type * as Plotly from 'plotly.js-dist-min';
 
 let loading: Promise<typeof Plotly> | undefined;
 
-/** Begins to load it. */
-export function loadPlotly(): Promise<typeof Plotly> {
+/** Whether it has been asked for. */
+export function isPlotLoaded(): boolean {
+  return loading !== undefined;
+}
+
+function loadPlotly(): Promise<typeof Plotly> {
   loading ??= import('plotly.js-dist-min').then((module) =>
     'default' in module ? (module.default as typeof Plotly) : module,
   );

@@ -2,7 +2,7 @@
 import type { MapQuantity } from '../worker/packet.ts';
 
 /** Rooms of the app, in the order of the bar. */
-export const ROOMS = ['plant', 'upset', 'setpoint', 'drill', 'record'] as const;
+const ROOMS = ['plant', 'upset', 'setpoint', 'drill', 'record'] as const;
 export type Room = (typeof ROOMS)[number];
 
 export interface View {

@@ -27,7 +27,7 @@ export type OpenLine = (onAnswer: (answer: Answer) => void, onEnd: (why: string)
 /** The worker ended before it answered. */
 export class EngineLost extends Error {}
 /** A mistake of the program inside the worker. */
-export class EngineFault extends Error {}
+class EngineFault extends Error {}
 /** The case has issues. */
 export class CaseRefused extends Error {
   readonly issues: readonly Issue[];

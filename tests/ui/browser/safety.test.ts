@@ -1,7 +1,5 @@
 // Nothing typed is lost, nothing leaves, everybody can use it. The built page in a real browser; costs some 20 s.
-import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
-
+import { source as axe } from 'axe-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 
 import { startRig, type Rig } from '../support/browser.ts';
@@ -13,8 +11,6 @@ beforeAll(async () => {
   rig = await startRig();
 }, 120_000);
 afterAll(() => rig.close());
-
-const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
 const quick = sharedPage(() => rig);
 

@@ -2,7 +2,6 @@
  * A real browser on the built page with its real headers. Chromium: BROWSER_PATH, one on the PATH or in the usual places
  * of macOS and Windows, else the one in the npm package (Linux x64, no system package needed).
  */
-import { execFileSync } from 'node:child_process';
 import { existsSync, mkdirSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import type { AddressInfo } from 'node:net';
 import { delimiter, join } from 'node:path';
@@ -143,14 +142,4 @@ async function launch(): Promise<Browser> {
   );
   const env = Object.fromEntries(Object.entries(process.env).flatMap(([k, v]) => (v === undefined ? [] : [[k, v]])));
   return chromium.launch({ executablePath, args, env: { ...env, FONTCONFIG_FILE: fonts } });
-}
-
-/** Version of the command line's program, run on a case; what it prints. */
-export function commandLine(...args: string[]): string {
-  return execFileSync(process.execPath, [join(ROOT, 'sim/cli/bedwave.js'), ...args], {
-    cwd: ROOT,
-    encoding: 'utf8',
-    maxBuffer: 1e9,
-    stdio: ['ignore', 'pipe', 'ignore'],
-  });
 }

@@ -21,7 +21,7 @@ export function quickCase(): string {
   return `${JSON.stringify(document, null, 2)}\n`;
 }
 
-export class MemoryKeeper implements Keeper {
+class MemoryKeeper implements Keeper {
   readonly kept = new Map<string, unknown>();
   get(key: string): Promise<unknown> {
     return Promise.resolve(structuredClone(this.kept.get(key)));

@@ -29,8 +29,13 @@ export const styles = css`
   .space {
     flex: 1;
   }
+  .picture,
   .plot {
     position: relative;
+  }
+  .sketch {
+    position: absolute;
+    inset: 0;
   }
   /* The few rules that a still chart needs of plotly's sheet, which stays outside this root. */
   .plot .main-svg {

@@ -1,8 +1,9 @@
-import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import { html, LitElement, nothing, svg, type PropertyValues, type TemplateResult } from 'lit';
 
 import { tableCsv, type ChartSpec } from '../../charts/chart.ts';
 import { dropDraw, queueDraw } from '../../charts/draw-queue.ts';
-import { drawPlot, plotImage, purgePlot } from '../../charts/plot.ts';
+import { drawPlot, isPlotLoaded, plotImage, purgePlot } from '../../charts/plot.ts';
+import { sketchOf } from '../../charts/sketch.ts';
 import { controls, tables } from '../../styles/shared.ts';
 import { formatNumber } from '../../format/numbers.ts';
 import { MORE } from '../icons.ts';
@@ -26,10 +27,12 @@ export class BwChart extends LitElement {
     spec: { attribute: false },
     height: { type: Number },
     showsTable: { state: true },
+    isPlotted: { state: true },
   };
   declare spec: ChartSpec | undefined;
   /** px */ declare height: number;
   declare private showsTable: boolean;
+  /** Until then a sketch stands in. */ declare private isPlotted: boolean;
 
   #isInSight = false;
   #drawn: ChartSpec | undefined;
@@ -52,6 +55,7 @@ export class BwChart extends LitElement {
     super();
     this.height = 120;
     this.showsTable = false;
+    this.isPlotted = false;
   }
 
   override connectedCallback(): void {
@@ -65,6 +69,7 @@ export class BwChart extends LitElement {
     this.#size.disconnect();
     dropDraw(this);
     this.#drawn = undefined;
+    this.isPlotted = false;
     const { plot } = this;
     if (plot !== null) void purgePlot(plot);
   }
@@ -83,8 +88,11 @@ export class BwChart extends LitElement {
     queueDraw(this, async () => {
       const { plot } = this;
       if (plot === null || this.spec === undefined) return;
+      // The sketch is on the screen before the library is read, which takes a second.
+      if (!isPlotLoaded()) await painted();
       this.#drawn = this.spec;
       await drawPlot(plot, this.spec.data, { ...this.spec.layout, width: plot.clientWidth, autosize: false });
+      this.isPlotted = true;
       this.dispatchEvent(new CustomEvent('bw-drawn', { bubbles: true, composed: true }));
     });
   }
@@ -99,9 +107,22 @@ export class BwChart extends LitElement {
         <slot name="readout"></slot>
         ${spec === undefined ? nothing : this.#renderMenu(spec)}
       </header>
-      <div class="plot" role="img" aria-label=${spec?.summary ?? ''} style="height:${height}px"></div>
+      <div class="picture" role="img" aria-label=${spec?.summary ?? ''} style="height:${height}px">
+        ${this.isPlotted || spec === undefined || this.clientWidth === 0 ? nothing : this.#renderSketch(spec)}
+        <div class="plot" style="height:${height}px"></div>
+      </div>
       ${this.showsTable && spec !== undefined ? this.#renderTable(spec) : nothing}
     `;
+  }
+
+  #renderSketch(spec: ChartSpec): TemplateResult {
+    const width = this.clientWidth;
+    return html`<svg class="sketch" width=${width} height=${this.height} aria-hidden="true">
+      ${sketchOf(spec, width, this.height).map(
+        (p) =>
+          svg`<path d=${p.d} stroke=${p.stroke} stroke-width=${p.width} stroke-dasharray=${p.dash} fill=${p.fill} />`,
+      )}
+    </svg>`;
   }
 
   #renderMenu(spec: ChartSpec): TemplateResult {
@@ -178,6 +199,15 @@ export class BwChart extends LitElement {
     };
     saveAddress(`${fileName(spec.title)}.${format}`, await plotImage(spec.data, layout, format, PICTURE));
   }
+}
+
+/** Resolves when what was rendered has been painted. */
+function painted(): Promise<void> {
+  return new Promise((resolve) => {
+    requestAnimationFrame(() => {
+      setTimeout(resolve, 0);
+    });
+  });
 }
 
 customElements.define('bw-chart', BwChart);

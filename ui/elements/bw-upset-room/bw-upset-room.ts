@@ -4,7 +4,6 @@ import { answerChart, headlineLanes, type ComparedRun } from '../../charts/answe
 import type { ChartSpec, Palette, TimeAxis } from '../../charts/chart.ts';
 import { laneChart } from '../../charts/lane-chart.ts';
 import { chosenMap, mapChart, mapChoices, type MapChoice } from '../../charts/map-chart.ts';
-import { loadPlotly } from '../../charts/plot.ts';
 import { StoreController } from '../../controllers/store-controller.ts';
 import { clock, clockMarks, fieldTime } from '../../format/clock.ts';
 import { displayOf } from '../../format/units.ts';
@@ -80,7 +79,6 @@ export class BwUpsetRoom extends LitElement {
     this.#size.observe(this);
     document.addEventListener('bw-theme', this.#onTheme);
     document.addEventListener('keydown', this.#onKey);
-    void loadPlotly();
   }
   override disconnectedCallback(): void {
     super.disconnectedCallback();
