@@ -1,5 +1,5 @@
 /** Runs side by side: the figures by which branches are judged. Pure. */
-import { massText } from '../../sim/index.ts';
+import { formatTime, massText } from '../../sim/index.ts';
 import { clock } from '../format/clock.ts';
 import { displayOf } from '../format/units.ts';
 import type { RunPacket } from '../worker/packet.ts';
@@ -24,7 +24,7 @@ export function compareRuns(packets: readonly (RunPacket | undefined)[], units: 
     ...asked.flatMap((l) =>
       l.averaging === undefined
         ? [`beyond ${displayOf(l, units).text(l.limit, 3)} for`]
-        : [`worst ${clock(l.averaging.window)} average`, `beyond ${displayOf(l, units).text(l.limit, 3)} for`],
+        : [`worst ${formatTime(l.averaging.window)} average`, `beyond ${displayOf(l, units).text(l.limit, 3)} for`],
     ),
     'above the limit',
     'emitted',

@@ -10,6 +10,7 @@ import type { Room, View } from '../../store/view.ts';
 import { controls } from '../../styles/shared.ts';
 import { unitChoices } from '../../format/units.ts';
 import { REDO, UNDO } from '../icons.ts';
+import { closeOnEscape, closeOnLeave, closeOnPressBeside } from '../menus.ts';
 import { openFiles } from '../open-files.ts';
 import { saveText } from '../save-file.ts';
 import '../bw-trust/bw-trust.ts';
@@ -181,7 +182,7 @@ export class BwBar extends LitElement {
       (event.currentTarget as HTMLElement).closest('details')?.removeAttribute('open');
       run();
     };
-    return html`<details @keydown=${onEscape} @focusout=${onLeave}>
+    return html`<details @keydown=${closeOnEscape} @focusout=${closeOnLeave} @toggle=${closeOnPressBeside}>
       <summary>Case</summary>
       <div class="menu">
         <button class="plain" @click=${act(() => this.renderRoot.querySelector<HTMLInputElement>('#file')?.click())}>
@@ -216,7 +217,7 @@ export class BwBar extends LitElement {
   }
 
   #renderLook(session: Session, units: Units, view: View): TemplateResult {
-    return html`<details @keydown=${onEscape} @focusout=${onLeave}>
+    return html`<details @keydown=${closeOnEscape} @focusout=${closeOnLeave} @toggle=${closeOnPressBeside}>
       <summary>Units and look</summary>
       <div class="menu">
         <label
@@ -332,20 +333,6 @@ const OWN_KINDS: readonly (readonly [QuantityKind, string])[] = [
   ['molar-flow', 'Gas flows'],
   ['length', 'Lengths'],
 ];
-
-function onEscape(event: KeyboardEvent): void {
-  if (event.key !== 'Escape') return;
-  const details = event.currentTarget as HTMLElement;
-  details.removeAttribute('open');
-  details.querySelector('summary')?.focus();
-  event.stopPropagation();
-}
-
-/** Closes a menu that the focus leaves. */
-function onLeave(event: FocusEvent): void {
-  const details = event.currentTarget as HTMLElement;
-  if (event.relatedTarget instanceof Node && !details.contains(event.relatedTarget)) details.removeAttribute('open');
-}
 
 customElements.define('bw-bar', BwBar);
 declare global {

@@ -34,6 +34,14 @@ export class BwBranches extends LitElement {
       select {
         max-width: 22em;
       }
+      th,
+      td:first-child {
+        white-space: normal;
+      }
+      th,
+      td {
+        padding: 2px 7px;
+      }
       td.bad {
         color: var(--bad);
         font-weight: 600;

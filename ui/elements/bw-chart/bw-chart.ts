@@ -7,6 +7,7 @@ import { sketchOf } from '../../charts/sketch.ts';
 import { controls, tables } from '../../styles/shared.ts';
 import { formatNumber } from '../../format/numbers.ts';
 import { MORE } from '../icons.ts';
+import { closeOnEscape, closeOnLeave, closeOnPressBeside } from '../menus.ts';
 import { fileName, saveAddress, saveText } from '../save-file.ts';
 import { styles } from './bw-chart.styles.ts';
 
@@ -126,7 +127,7 @@ export class BwChart extends LitElement {
   }
 
   #renderMenu(spec: ChartSpec): TemplateResult {
-    return html`<details @focusout=${this.#onFocusOut} @keydown=${this.#onKey}>
+    return html`<details @focusout=${closeOnLeave} @keydown=${closeOnEscape} @toggle=${closeOnPressBeside}>
       <summary aria-label="Numbers and files of: ${spec.title}">${MORE}</summary>
       <div class="menu">
         <button class="plain" aria-pressed=${this.showsTable ? 'true' : 'false'} @click=${this.#onTable}>
@@ -164,16 +165,6 @@ export class BwChart extends LitElement {
 
   #closeMenu(): void {
     this.renderRoot.querySelector('details')?.removeAttribute('open');
-  }
-  #onFocusOut(event: FocusEvent): void {
-    const menu = event.currentTarget as HTMLElement;
-    if (!(event.relatedTarget instanceof Node) || !menu.contains(event.relatedTarget)) menu.removeAttribute('open');
-  }
-  #onKey(event: KeyboardEvent): void {
-    if (event.key !== 'Escape') return;
-    this.#closeMenu();
-    this.renderRoot.querySelector('summary')?.focus();
-    event.stopPropagation();
   }
   #onTable(): void {
     this.showsTable = !this.showsTable;

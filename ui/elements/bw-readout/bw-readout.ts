@@ -1,4 +1,4 @@
-import { css, html, LitElement, type TemplateResult } from 'lit';
+import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 
 import { valueAtTime } from '../../charts/decimate.ts';
 import { StoreController } from '../../controllers/store-controller.ts';
@@ -29,6 +29,9 @@ export class BwReadout extends LitElement {
       font-weight: 600;
       color: var(--ink);
     }
+    [style] b {
+      color: inherit;
+    }
   `;
   static override properties = { values: { attribute: false }, playhead: { attribute: false } };
   declare values: readonly ReadOff[];
@@ -44,7 +47,7 @@ export class BwReadout extends LitElement {
     const t = this.playhead?.time ?? 0;
     return html`${this.values.map(
       ({ label, time, value, display, color }) =>
-        html`<span style=${color === undefined ? '' : `color:${color}`}
+        html`<span style=${color === undefined ? nothing : `color:${color}`}
           >${label} <b>${display.text(valueAtTime(time, value, t), 3)}</b></span
         >`,
     )}`;

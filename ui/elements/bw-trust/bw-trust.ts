@@ -4,6 +4,7 @@ import { formatNumber, formatTime } from '../../format/numbers.ts';
 import type { RunState, Study } from '../../store/shown.ts';
 import type { StudyState } from '../../store/session.ts';
 import { controls, tables } from '../../styles/shared.ts';
+import { closeOnEscape, closeOnPressBeside } from '../menus.ts';
 import { SIGN } from '../signs.ts';
 
 /** How far the run on the screen can be believed: a mark, and each part of it in a sentence. @fires bw-study @fires bw-study-stop */
@@ -86,12 +87,12 @@ export class BwTrust extends LitElement {
     if (packet === undefined) return html`<details><summary>not computed yet</summary></details>`;
     const { closure, warnings, outcome } = packet.document;
     const isDraft = packet.quality === 'draft' || this.run?.isStale === true;
-    const ranges = warnings.filter((w) => w.kind === 'range-left').length;
+    const cautions = warnings.filter((w) => w.time !== null).length;
     const isBad = !closure.ok || outcome.kind === 'failed';
     const words = outcome.kind === 'failed' ? 'stopped early' : closure.ok ? 'balance closes' : 'balance open';
-    return html`<details>
+    return html`<details @keydown=${closeOnEscape} @toggle=${closeOnPressBeside}>
       <summary class=${isBad ? 'bad' : ''}>
-        ${isBad ? SIGN.beyond : SIGN.kept}${words}${ranges > 0 ? html` · ${ranges} ${ranges === 1 ? 'range' : 'ranges'} left` : nothing}${isDraft ? html` · draft` : nothing}
+        ${isBad ? SIGN.beyond : SIGN.kept}${words}${cautions > 0 ? html` · ${cautions} ${cautions === 1 ? 'caution' : 'cautions'}` : nothing}${isDraft ? html` · draft` : nothing}
       </summary>
       <div class="sheet">
         <h3>Balance</h3>

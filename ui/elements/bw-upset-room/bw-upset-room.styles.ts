@@ -81,6 +81,24 @@ export const styles = css`
     pointer-events: none;
     will-change: transform;
   }
+  .scale {
+    display: flex;
+    align-items: center;
+    gap: 6px;
+    font-size: 12px;
+    color: var(--ink-2);
+    white-space: nowrap;
+  }
+  .scale .bar {
+    width: 110px;
+    height: 9px;
+  }
+  bw-step-editor {
+    display: block;
+    position: relative;
+    z-index: 4;
+    background: var(--paper);
+  }
   .lanes-head,
   .below {
     padding-left: 8px;
@@ -205,7 +223,7 @@ export const styles = css`
   .up > .menu {
     position: absolute;
     bottom: calc(100% + 4px);
-    left: 0;
+    right: 0;
     z-index: 20;
     max-height: min(60vh, 520px);
     overflow: auto;

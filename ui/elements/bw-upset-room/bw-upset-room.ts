@@ -3,7 +3,9 @@ import { html, LitElement, nothing, type PropertyValues, type TemplateResult } f
 import { answerChart, headlineLanes, type ComparedRun } from '../../charts/answer-chart.ts';
 import type { ChartSpec, Palette, TimeAxis } from '../../charts/chart.ts';
 import { laneChart } from '../../charts/lane-chart.ts';
-import { chosenMap, mapChart, mapChoices, type MapChoice } from '../../charts/map-chart.ts';
+import { cividis } from '../../charts/cividis.ts';
+import { chosenMap, colorScale, mapChart, mapChoices, type MapChoice } from '../../charts/map-chart.ts';
+import { formatNumber } from '../../format/numbers.ts';
 import { StoreController } from '../../controllers/store-controller.ts';
 import { clock, clockMarks, fieldTime } from '../../format/clock.ts';
 import { displayOf } from '../../format/units.ts';
@@ -19,6 +21,7 @@ import { MOST_BRANCHES } from '../../store/work.ts';
 import { controls, tables } from '../../styles/shared.ts';
 import { CLOSE, MINUS, PLUS } from '../icons.ts';
 import { EVENT_SIGN, SIGN } from '../signs.ts';
+import { closeOnEscape, closeOnLeave, closeOnPressBeside } from '../menus.ts';
 import { readPalette } from '../palette.ts';
 import '../bw-branches/bw-branches.ts';
 import '../bw-chart/bw-chart.ts';
@@ -37,6 +40,9 @@ const LANE = 78;
 const LABEL = 84;
 /** Parts of the shown time that a key step moves. */
 const PARTS = 200;
+
+/** The colour scale of maps, for a bar. */
+const SHADES = [0, 0.25, 0.5, 0.75, 1].map(cividis).join(',');
 
 /** What a room's charts are made of; a change of any makes them anew. */
 type Inputs = readonly unknown[];
@@ -270,6 +276,7 @@ export class BwUpsetRoom extends LitElement {
             ${mapChoices(packet, units).map((c) => html`<option value=${c.id} ?selected=${c.id === this.#choice?.id}>${c.label}</option>`)}
           </select></label
         >
+        ${this.#renderScale(packet)}
       </bw-chart>
       <div class="lanes-head">
         <h2>Instruments</h2>
@@ -314,6 +321,18 @@ export class BwUpsetRoom extends LitElement {
             </div>`
       }
     `;
+  }
+
+  /** What the colours of the map mean. */
+  #renderScale(packet: RunPacket): TemplateResult | typeof nothing {
+    const choice = this.#choice;
+    if (choice === undefined) return nothing;
+    const { low, high } = colorScale(packet.map, choice);
+    const unit = choice.display.unit === '1' ? '' : ` ${choice.display.unit}`;
+    return html`<span slot="readout" class="scale"
+      >${formatNumber(low, 2)}<span class="bar" style="background:linear-gradient(to right, ${SHADES})"></span
+      >${formatNumber(high, 2)}${unit}${choice.isLog ? ', log' : ''}</span
+    >`;
   }
 
   #renderBelow(packet: RunPacket, { work, main, branches, read }: SessionState): TemplateResult {
@@ -492,7 +511,7 @@ export class BwUpsetRoom extends LitElement {
           .filter((c) => c.role === role)
           .map((c) => html`<button class="plain" @click=${(e: Event) => this.#onAdd(e, c)}>${c.label}</button>`)}
       </div>`;
-    return html`<details class="up" @keydown=${closeOnEscape} @focusout=${closeOnLeave}>
+    return html`<details class="up" @keydown=${closeOnEscape} @focusout=${closeOnLeave} @toggle=${closeOnPressBeside}>
       <summary>Add at the playhead</summary>
       <div class="menu two">${list('upset', 'Upsets')}${list('action', 'Actions')}</div>
     </details>`;
@@ -509,9 +528,9 @@ export class BwUpsetRoom extends LitElement {
             this.session.setField([...base, key], (e.target as HTMLInputElement).value);
           }}
       /></label>`;
-    return html`<details class="up" @keydown=${closeOnEscape}>
+    return html`<details class="up" @keydown=${closeOnEscape} @toggle=${closeOnPressBeside}>
       <summary>Scenario</summary>
-      <div class="menu" style="left:auto;right:0">
+      <div class="menu">
         ${field('title', 'Title')} ${field('duration', 'Duration')}
         <label
           >Begins
@@ -768,18 +787,6 @@ const MARKED: Readonly<Record<string, string>> = {
 /** A value of a case as a field shows it. */
 function shownText(value: unknown): string {
   return typeof value === 'string' || typeof value === 'number' ? String(value) : '';
-}
-
-function closeOnEscape(event: KeyboardEvent): void {
-  if (event.key !== 'Escape') return;
-  const details = event.currentTarget as HTMLElement;
-  details.removeAttribute('open');
-  details.querySelector('summary')?.focus();
-  event.stopPropagation();
-}
-function closeOnLeave(event: FocusEvent): void {
-  const details = event.currentTarget as HTMLElement;
-  if (event.relatedTarget instanceof Node && !details.contains(event.relatedTarget)) details.removeAttribute('open');
 }
 
 customElements.define('bw-upset-room', BwUpsetRoom);
