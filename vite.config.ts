@@ -61,6 +61,9 @@ const node = (mode: string): ViteUserConfig => ({
   ssr: { noExternal: mode === 'test' ? [] : true },
   test: {
     include: ['tests/**/*.test.ts'],
+    // Guards against a hang, not a measure of speed: machines are shared.
+    testTimeout: 60_000,
+    hookTimeout: 120_000,
     reporters: ['default', closingLine],
     coverage: { include: ['sim/**/*.ts', 'ui/**/*.ts'], reportsDirectory: 'coverage' },
   },
